@@ -1,0 +1,91 @@
+import type { Licence } from '../../shared/contracts/common.js';
+import type { Role } from '../../shared/permission/can.js';
+import type { Database } from './database.js';
+
+export interface User {
+  readonly id: string;
+  readonly email: string;
+  readonly name: string;
+  readonly role: Role;
+  readonly creditLine: string;
+  readonly defaultLicence: Licence;
+  readonly fingertipMm: number | null;
+  /** file name under the data folder's `portraits/`; null without a portrait */
+  readonly portrait: string | null;
+  readonly createdAt: string;
+  readonly lastSeenAt: string | null;
+}
+
+interface Row {
+  id: string;
+  email: string;
+  name: string;
+  role: Role;
+  password_hash: string;
+  credit_line: string;
+  default_licence: Licence;
+  fingertip_mm: number | null;
+  portrait: string | null;
+  created_at: string;
+  last_seen_at: string | null;
+}
+
+export class UserTable {
+  constructor(private readonly db: Database) {}
+
+  async find(id: string): Promise<User | null> {
+    const row = await this.db.read<Row>('users').where({ id }).first();
+    return row ? toUser(row) : null;
+  }
+
+  /** with the password's hash, for signing in alone */
+  async findByEmail(email: string): Promise<(User & { passwordHash: string }) | null> {
+    const row = await this.db.read<Row>('users').where({ email: email.toLowerCase() }).first();
+    return row ? { ...toUser(row), passwordHash: row.password_hash } : null;
+  }
+
+  async list(): Promise<User[]> {
+    return (await this.db.read<Row>('users').orderBy('name')).map(toUser);
+  }
+
+  async insert(user: Omit<User, 'lastSeenAt'> & { passwordHash: string }, knex = this.db.write): Promise<void> {
+    const { passwordHash, ...rest } = user;
+    await knex('users').insert({ ...toColumns(rest), id: user.id, created_at: user.createdAt, password_hash: passwordHash });
+  }
+
+  async update(id: string, change: Partial<Omit<User, 'id' | 'createdAt'>>): Promise<void> {
+    await this.db.write('users').where({ id }).update(toColumns(change));
+  }
+
+  async setPasswordHash(id: string, passwordHash: string): Promise<void> {
+    await this.db.write('users').where({ id }).update({ password_hash: passwordHash });
+  }
+}
+
+function toUser(row: Row): User {
+  return {
+    id: row.id,
+    email: row.email,
+    name: row.name,
+    role: row.role,
+    creditLine: row.credit_line,
+    defaultLicence: row.default_licence,
+    fingertipMm: row.fingertip_mm,
+    portrait: row.portrait,
+    createdAt: row.created_at,
+    lastSeenAt: row.last_seen_at,
+  };
+}
+
+function toColumns(user: Partial<Omit<User, 'id' | 'createdAt'>>): Partial<Row> {
+  return {
+    ...(user.email !== undefined && { email: user.email.toLowerCase() }),
+    ...(user.name !== undefined && { name: user.name }),
+    ...(user.role !== undefined && { role: user.role }),
+    ...(user.creditLine !== undefined && { credit_line: user.creditLine }),
+    ...(user.defaultLicence !== undefined && { default_licence: user.defaultLicence }),
+    ...(user.fingertipMm !== undefined && { fingertip_mm: user.fingertipMm }),
+    ...(user.portrait !== undefined && { portrait: user.portrait }),
+    ...(user.lastSeenAt !== undefined && { last_seen_at: user.lastSeenAt }),
+  };
+}

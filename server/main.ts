@@ -1,0 +1,38 @@
+import { createServer } from 'node:http';
+import { pino } from 'pino';
+import { createApp } from './app.js';
+import { systemClock } from './clock.js';
+import { readConfig } from './config.js';
+import { openDatabase } from './db/database.js';
+
+/** Opens the data folder, then listens; closes in order when asked to stop. */
+async function main(): Promise<void> {
+  const config = readConfig(process.env);
+  const log = pino({ level: config.logLevel });
+  const db = await openDatabase(config.dataDir);
+  const app = createApp({ config, db, clock: systemClock, log });
+  const server = createServer(app.express);
+  await new Promise<void>((resolve, reject) => {
+    server.once('error', reject);
+    server.listen(config.port, resolve);
+  });
+  app.start();
+  log.info(`Motebook is open at ${config.publicUrl}`);
+
+  const stop = (): void => {
+    server.close(() => {
+      void app
+        .stop()
+        .then(() => db.close())
+        .then(() => process.exit(0));
+    });
+    server.closeIdleConnections();
+  };
+  process.once('SIGINT', stop);
+  process.once('SIGTERM', stop);
+}
+
+main().catch((error: unknown) => {
+  process.stderr.write(`${error instanceof Error ? error.message : String(error)}\n`);
+  process.exitCode = 1;
+});

@@ -1,0 +1,20 @@
+import type {} from 'passport';
+import type { Request } from 'express';
+import { type Actor, type Role, VISITOR } from '../../shared/permission/can.js';
+
+declare global {
+  // eslint-disable-next-line @typescript-eslint/no-namespace -- how Express types are extended
+  namespace Express {
+    /** Who is signed in, as passport restores it. */
+    interface User {
+      id: string;
+      role: Role;
+      name: string;
+    }
+  }
+}
+
+/** Who asks. */
+export function actorOf(req: Request): Actor {
+  return req.user ? { kind: 'user', id: req.user.id, role: req.user.role } : VISITOR;
+}
