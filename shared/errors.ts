@@ -23,3 +23,17 @@ export function requirePositive(value: number, name: string): void {
     throw new DomainError('not-positive', `${name} must be a positive number, was ${value}.`, { name });
   }
 }
+
+/** @throws {DomainError} `not-positive` below zero and for infinities, `not-finite` for NaN */
+export function requireNotNegative(value: number, name: string): void {
+  if (Number.isNaN(value)) throw new DomainError('not-finite', `${name} must be a number.`, { name });
+  if (!(value >= 0 && Number.isFinite(value))) {
+    throw new DomainError('not-positive', `${name} must be zero or a positive number, was ${value}.`, { name });
+  }
+}
+
+/** @throws {DomainError} `not-finite` when any of the values is NaN or infinite */
+export function requireFinite(values: readonly number[], name: string): void {
+  const bad = values.find((value) => !Number.isFinite(value));
+  if (bad !== undefined) throw new DomainError('not-finite', `${name} must be finite, one was ${bad}.`, { name });
+}

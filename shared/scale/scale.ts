@@ -18,4 +18,10 @@ export interface Scale {
   /** standard uncertainty of both as a fraction (k = 1); they share one cause, so they err together */
   readonly relativeUncertainty: number;
   readonly grounds: Exclude<Grounds, 'none'>;
+  /**
+   * The part of `relativeUncertainty` that is a limit rather than a spread (a maker's tolerance):
+   * its half-width as a fraction. With it a 95 % interval can be exact; without it everything counts
+   * as normal, and the interval comes out somewhat too wide, never too narrow.
+   */
+  readonly limitFraction?: number;
 }
