@@ -59,6 +59,8 @@ async function checked(knex: Knex, up: Knex.Migration['up']): Promise<void> {
   await up(knex);
   const orphans = (await knex.raw('pragma foreign_key_check')) as unknown[];
   if (orphans.length > 0) {
-    throw new Error(`The migration leaves ${orphans.length} rows that point at nothing: ${JSON.stringify(orphans.slice(0, 3))}`);
+    throw new Error(
+      `The migration leaves ${orphans.length} rows that point at nothing: ${JSON.stringify(orphans.slice(0, 3))}`,
+    );
   }
 }

@@ -53,7 +53,10 @@ export class SessionTable extends Store {
     const row = await this.db.read<Row>('sessions').where({ sid }).first();
     const end = this.endOf(session);
     if (!row || Date.parse(end) - Date.parse(row.expires_at) < TOUCH_EVERY_MS) return;
-    await this.db.write('sessions').where({ sid }).update({ data: JSON.stringify(session), expires_at: end });
+    await this.db
+      .write('sessions')
+      .where({ sid })
+      .update({ data: JSON.stringify(session), expires_at: end });
   }
 
   private endOf(session: SessionData): string {

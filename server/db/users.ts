@@ -50,7 +50,12 @@ export class UserTable {
 
   async insert(user: Omit<User, 'lastSeenAt'> & { passwordHash: string }, knex = this.db.write): Promise<void> {
     const { passwordHash, ...rest } = user;
-    await knex('users').insert({ ...toColumns(rest), id: user.id, created_at: user.createdAt, password_hash: passwordHash });
+    await knex('users').insert({
+      ...toColumns(rest),
+      id: user.id,
+      created_at: user.createdAt,
+      password_hash: passwordHash,
+    });
   }
 
   async update(id: string, change: Partial<Omit<User, 'id' | 'createdAt'>>): Promise<void> {

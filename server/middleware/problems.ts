@@ -40,7 +40,8 @@ function toHttpProblem(error: unknown): HttpProblem | null {
   if (error instanceof DomainError) return new HttpProblem(422, error.code, error.message, error.parameters);
   if (!isHttpError(error)) return null;
   // express.json, multer and csrf-csrf throw errors that carry a status and are meant to be shown
-  if (error.code === 'EBADCSRFTOKEN') return new HttpProblem(403, 'stale-page', 'The request carries no valid XSRF token.');
+  if (error.code === 'EBADCSRFTOKEN')
+    return new HttpProblem(403, 'stale-page', 'The request carries no valid XSRF token.');
   if (error.status === 413 || error.code === 'LIMIT_FILE_SIZE') return new HttpProblem(413, 'too-large', error.message);
   return error.status < 500 ? new HttpProblem(error.status, 'bad-request', error.message) : null;
 }

@@ -51,7 +51,7 @@ export function sessions(options: {
         saveUninitialized: false,
         cookie: { httpOnly: true, sameSite: 'lax', secure, maxAge: TWO_WEEKS_MS },
       }),
-      passport.session(),
+      passport.session() as RequestHandler,
     ],
   };
 }

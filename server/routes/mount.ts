@@ -55,7 +55,8 @@ export class Mount {
       }
       if (this.checkAnswers && contract.response) {
         const checked = z.safeParse(contract.response, answer);
-        if (!checked.success) throw new Error(`${contract.method} ${contract.path} breaks its contract: ${checked.error.message}`);
+        if (!checked.success)
+          throw new Error(`${contract.method} ${contract.path} breaks its contract: ${checked.error.message}`);
       }
       res.json(answer);
     });

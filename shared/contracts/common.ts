@@ -6,8 +6,7 @@ import { VISIBILITIES } from '../permission/can.js';
 export const Id = z.uuid();
 
 /** One line of text, trimmed, not empty. */
-export const line = (maxLength: number) =>
-  z.string().check(z.trim(), z.minLength(1), z.maxLength(maxLength));
+export const line = (maxLength: number) => z.string().check(z.trim(), z.minLength(1), z.maxLength(maxLength));
 
 /** Text that may be empty or run over several lines, trimmed. */
 export const prose = (maxLength: number) => z.string().check(z.trim(), z.maxLength(maxLength));

@@ -59,7 +59,10 @@ export const EditFind = z.strictObject({
 });
 export type EditFind = z.infer<typeof EditFind>;
 
-export const AddObservation = z.strictObject({ ...NewObservation.shape, imageIds: z.array(Id).check(z.maxLength(200)) });
+export const AddObservation = z.strictObject({
+  ...NewObservation.shape,
+  imageIds: z.array(Id).check(z.maxLength(200)),
+});
 export type AddObservation = z.infer<typeof AddObservation>;
 export const EditObservation = z.partial(NewObservation);
 export type EditObservation = z.infer<typeof EditObservation>;
@@ -185,13 +188,69 @@ export type FindRow = z.infer<typeof FindRow>;
 
 const find = { on: 'find', param: 'findId' } as const;
 export const findRoutes = defineRoutes({
-  mine: { method: 'get', path: '/api/finds', on: 'site', param: null, action: 'site.contribute', response: z.array(FindRow) },
-  make: { method: 'post', path: '/api/finds', on: 'site', param: null, action: 'site.contribute', body: NewFind, response: FindView },
+  mine: {
+    method: 'get',
+    path: '/api/finds',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    response: z.array(FindRow),
+  },
+  make: {
+    method: 'post',
+    path: '/api/finds',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    body: NewFind,
+    response: FindView,
+  },
   read: { method: 'get', path: '/api/finds/:findId', ...find, action: 'find.read', response: FindView },
-  edit: { method: 'patch', path: '/api/finds/:findId', ...find, action: 'find.edit', body: EditFind, response: FindView },
-  addObservation: { method: 'post', path: '/api/finds/:findId/observations', ...find, action: 'find.edit', body: AddObservation, response: FindView },
-  editObservation: { method: 'patch', path: '/api/finds/:findId/observations/:observationId', ...find, action: 'find.edit', body: EditObservation, response: FindView },
-  addPreparation: { method: 'post', path: '/api/finds/:findId/preparations', ...find, action: 'find.edit', body: NewPreparation, response: FindView },
-  determine: { method: 'post', path: '/api/finds/:findId/determinations', ...find, action: 'find.determine', body: NewDetermination, response: FindView },
-  decide: { method: 'put', path: '/api/finds/:findId/standing/:determinationId', ...find, action: 'find.decide', response: FindView },
+  edit: {
+    method: 'patch',
+    path: '/api/finds/:findId',
+    ...find,
+    action: 'find.edit',
+    body: EditFind,
+    response: FindView,
+  },
+  addObservation: {
+    method: 'post',
+    path: '/api/finds/:findId/observations',
+    ...find,
+    action: 'find.edit',
+    body: AddObservation,
+    response: FindView,
+  },
+  editObservation: {
+    method: 'patch',
+    path: '/api/finds/:findId/observations/:observationId',
+    ...find,
+    action: 'find.edit',
+    body: EditObservation,
+    response: FindView,
+  },
+  addPreparation: {
+    method: 'post',
+    path: '/api/finds/:findId/preparations',
+    ...find,
+    action: 'find.edit',
+    body: NewPreparation,
+    response: FindView,
+  },
+  determine: {
+    method: 'post',
+    path: '/api/finds/:findId/determinations',
+    ...find,
+    action: 'find.determine',
+    body: NewDetermination,
+    response: FindView,
+  },
+  decide: {
+    method: 'put',
+    path: '/api/finds/:findId/standing/:determinationId',
+    ...find,
+    action: 'find.decide',
+    response: FindView,
+  },
 });

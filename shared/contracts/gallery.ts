@@ -35,5 +35,13 @@ export const GalleryPage = z.strictObject({
 export type GalleryPage = z.infer<typeof GalleryPage>;
 
 export const galleryRoutes = defineRoutes({
-  page: { method: 'get', path: '/api/gallery', on: 'site', param: null, action: 'site.read', query: GalleryQuery, response: GalleryPage },
+  page: {
+    method: 'get',
+    path: '/api/gallery',
+    on: 'site',
+    param: null,
+    action: 'site.read',
+    query: GalleryQuery,
+    response: GalleryPage,
+  },
 });

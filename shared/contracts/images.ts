@@ -3,7 +3,16 @@ import { Grounds, Id, Licence, line, NameView, PersonRef, prose } from './common
 import { defineRoutes } from './route.js';
 import { ScaleView, SetScale } from './scales.js';
 
-export const LIGHTS = ['daylight', 'flash', 'lamp', 'ultraviolet', 'bright field', 'dark field', 'phase contrast', 'unknown'] as const;
+export const LIGHTS = [
+  'daylight',
+  'flash',
+  'lamp',
+  'ultraviolet',
+  'bright field',
+  'dark field',
+  'phase contrast',
+  'unknown',
+] as const;
 export const Light = z.enum(LIGHTS);
 
 /** `subject` is a picture of the find; `reference` a picture of a stage micrometer or ruler, not shown in the gallery. */
@@ -42,7 +51,9 @@ export const ImageTile = z.strictObject({
   colours: z.array(z.string()),
   /** renditions are `/renditions/{id}~{revision}/{width}.webp` for each of these widths */
   renditionWidths: z.array(z.number()),
-  scale: z.nullable(z.strictObject({ umPerPxX: z.number(), umPerPxY: z.number(), relativeUncertainty: z.number(), grounds: Grounds })),
+  scale: z.nullable(
+    z.strictObject({ umPerPxX: z.number(), umPerPxY: z.number(), relativeUncertainty: z.number(), grounds: Grounds }),
+  ),
 });
 export type ImageTile = z.infer<typeof ImageTile>;
 
@@ -112,15 +123,42 @@ export type PictureQuery = z.infer<typeof PictureQuery>;
 
 const image = { on: 'image', param: 'imageId' } as const;
 export const imageRoutes = defineRoutes({
-  tray: { method: 'get', path: '/api/tray', on: 'site', param: null, action: 'site.contribute', response: z.array(TrayPicture) },
+  tray: {
+    method: 'get',
+    path: '/api/tray',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    response: z.array(TrayPicture),
+  },
   read: { method: 'get', path: '/api/images/:imageId', ...image, action: 'image.read', response: ImageView },
-  edit: { method: 'patch', path: '/api/images/:imageId', ...image, action: 'image.edit', body: EditImage, response: ImageView },
+  edit: {
+    method: 'patch',
+    path: '/api/images/:imageId',
+    ...image,
+    action: 'image.edit',
+    body: EditImage,
+    response: ImageView,
+  },
   /** takes a picture out of the tray (only while it is in no find); its original goes when no other picture has it */
   discard: { method: 'delete', path: '/api/images/:imageId', ...image, action: 'image.edit' },
   /** takes up intake again after a failure */
   retry: { method: 'post', path: '/api/images/:imageId/retry', ...image, action: 'image.edit', response: TrayPicture },
   original: { method: 'get', path: '/api/images/:imageId/original', ...image, action: 'image.read-original' },
   picture: { method: 'get', path: '/api/images/:imageId/picture', ...image, action: 'image.read', query: PictureQuery },
-  scales: { method: 'get', path: '/api/images/:imageId/scales', ...image, action: 'image.read', response: z.array(ScaleView) },
-  setScale: { method: 'post', path: '/api/images/:imageId/scales', ...image, action: 'image.edit', body: SetScale, response: ImageView },
+  scales: {
+    method: 'get',
+    path: '/api/images/:imageId/scales',
+    ...image,
+    action: 'image.read',
+    response: z.array(ScaleView),
+  },
+  setScale: {
+    method: 'post',
+    path: '/api/images/:imageId/scales',
+    ...image,
+    action: 'image.edit',
+    body: SetScale,
+    response: ImageView,
+  },
 });

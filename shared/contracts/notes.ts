@@ -55,6 +55,20 @@ export type PushedEdits = z.infer<typeof PushedEdits>;
 const image = { on: 'image', param: 'imageId' } as const;
 export const noteRoutes = defineRoutes({
   read: { method: 'get', path: '/api/images/:imageId/notes', ...image, action: 'image.read', response: NotesView },
-  since: { method: 'get', path: '/api/images/:imageId/note-edits', ...image, action: 'image.read', query: NotesSince, response: EditsView },
-  push: { method: 'post', path: '/api/images/:imageId/note-edits', ...image, action: 'image.annotate', body: PushEdits, response: PushedEdits },
+  since: {
+    method: 'get',
+    path: '/api/images/:imageId/note-edits',
+    ...image,
+    action: 'image.read',
+    query: NotesSince,
+    response: EditsView,
+  },
+  push: {
+    method: 'post',
+    path: '/api/images/:imageId/note-edits',
+    ...image,
+    action: 'image.annotate',
+    body: PushEdits,
+    response: PushedEdits,
+  },
 });

@@ -69,7 +69,10 @@ export const NewSetting = z.strictObject({
 export type NewSetting = z.infer<typeof NewSetting>;
 
 /** A marked graduation: where it lies, and which one it is, counted in spacings from any first. */
-export const Mark = z.strictObject({ at: ImagePoint, index: z.number().check(z.int(), z.minimum(-10000), z.maximum(10000)) });
+export const Mark = z.strictObject({
+  at: ImagePoint,
+  index: z.number().check(z.int(), z.minimum(-10000), z.maximum(10000)),
+});
 export type Mark = z.infer<typeof Mark>;
 
 export const NewCalibration = z.strictObject({
@@ -89,9 +92,40 @@ export const CalibrationKept = z.strictObject({ calibration: CalibrationView, sc
 export type CalibrationKept = z.infer<typeof CalibrationKept>;
 
 export const rigRoutes = defineRoutes({
-  list: { method: 'get', path: '/api/rigs', on: 'site', param: null, action: 'site.contribute', response: z.array(RigView) },
-  add: { method: 'post', path: '/api/rigs', on: 'site', param: null, action: 'site.contribute', body: NewRig, response: RigView },
+  list: {
+    method: 'get',
+    path: '/api/rigs',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    response: z.array(RigView),
+  },
+  add: {
+    method: 'post',
+    path: '/api/rigs',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    body: NewRig,
+    response: RigView,
+  },
   read: { method: 'get', path: '/api/rigs/:rigId', on: 'rig', param: 'rigId', action: 'rig.read', response: RigView },
-  addSetting: { method: 'post', path: '/api/rigs/:rigId/settings', on: 'rig', param: 'rigId', action: 'rig.edit', body: NewSetting, response: SettingView },
-  calibrate: { method: 'post', path: '/api/rigs/:rigId/settings/:settingId/calibrations', on: 'rig', param: 'rigId', action: 'rig.edit', body: NewCalibration, response: CalibrationKept },
+  addSetting: {
+    method: 'post',
+    path: '/api/rigs/:rigId/settings',
+    on: 'rig',
+    param: 'rigId',
+    action: 'rig.edit',
+    body: NewSetting,
+    response: SettingView,
+  },
+  calibrate: {
+    method: 'post',
+    path: '/api/rigs/:rigId/settings/:settingId/calibrations',
+    on: 'rig',
+    param: 'rigId',
+    action: 'rig.edit',
+    body: NewCalibration,
+    response: CalibrationKept,
+  },
 });

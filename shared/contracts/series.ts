@@ -53,9 +53,45 @@ export const EditSeries = z.strictObject({
 export type EditSeries = z.infer<typeof EditSeries>;
 
 export const seriesRoutes = defineRoutes({
-  ofImage: { method: 'get', path: '/api/images/:imageId/series', on: 'image', param: 'imageId', action: 'image.read', response: z.array(SeriesView) },
-  open: { method: 'post', path: '/api/images/:imageId/series', on: 'image', param: 'imageId', action: 'image.annotate', body: OpenSeries, response: SeriesView },
-  read: { method: 'get', path: '/api/series/:seriesId', on: 'series', param: 'seriesId', action: 'series.read', response: SeriesView },
-  edit: { method: 'patch', path: '/api/series/:seriesId', on: 'series', param: 'seriesId', action: 'series.measure', body: EditSeries, response: SeriesView },
-  csv: { method: 'get', path: '/api/series/:seriesId/values.csv', on: 'series', param: 'seriesId', action: 'series.read' },
+  ofImage: {
+    method: 'get',
+    path: '/api/images/:imageId/series',
+    on: 'image',
+    param: 'imageId',
+    action: 'image.read',
+    response: z.array(SeriesView),
+  },
+  open: {
+    method: 'post',
+    path: '/api/images/:imageId/series',
+    on: 'image',
+    param: 'imageId',
+    action: 'image.annotate',
+    body: OpenSeries,
+    response: SeriesView,
+  },
+  read: {
+    method: 'get',
+    path: '/api/series/:seriesId',
+    on: 'series',
+    param: 'seriesId',
+    action: 'series.read',
+    response: SeriesView,
+  },
+  edit: {
+    method: 'patch',
+    path: '/api/series/:seriesId',
+    on: 'series',
+    param: 'seriesId',
+    action: 'series.measure',
+    body: EditSeries,
+    response: SeriesView,
+  },
+  csv: {
+    method: 'get',
+    path: '/api/series/:seriesId/values.csv',
+    on: 'series',
+    param: 'seriesId',
+    action: 'series.read',
+  },
 });

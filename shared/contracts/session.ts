@@ -43,20 +43,77 @@ export type AskPasswordReset = z.infer<typeof AskPasswordReset>;
 export const ResetPassword = z.strictObject({ token: line(200), password: Password });
 export type ResetPassword = z.infer<typeof ResetPassword>;
 
-export const InvitationView = z.strictObject({ email: z.string(), role: Role, invitedBy: z.string(), expiresAt: z.string() });
+export const InvitationView = z.strictObject({
+  email: z.string(),
+  role: Role,
+  invitedBy: z.string(),
+  expiresAt: z.string(),
+});
 export type InvitationView = z.infer<typeof InvitationView>;
 export const AcceptInvitation = z.strictObject({ token: line(200), name: line(80), password: Password });
 export type AcceptInvitation = z.infer<typeof AcceptInvitation>;
 
 export const sessionRoutes = defineRoutes({
   read: { method: 'get', path: '/api/session', on: 'site', param: null, action: 'site.read', response: Session },
-  signIn: { method: 'post', path: '/api/session', on: 'site', param: null, action: 'site.sign-in', body: SignIn, response: Session },
+  signIn: {
+    method: 'post',
+    path: '/api/session',
+    on: 'site',
+    param: null,
+    action: 'site.sign-in',
+    body: SignIn,
+    response: Session,
+  },
   signOut: { method: 'delete', path: '/api/session', on: 'site', param: null, action: 'site.sign-in' },
-  askReset: { method: 'post', path: '/api/password-resets', on: 'site', param: null, action: 'site.sign-in', body: AskPasswordReset },
-  reset: { method: 'put', path: '/api/password-resets', on: 'site', param: null, action: 'site.sign-in', body: ResetPassword },
-  readInvitation: { method: 'get', path: '/api/invitations/:token', on: 'site', param: null, action: 'site.sign-in', response: InvitationView },
-  accept: { method: 'post', path: '/api/invitations/accept', on: 'site', param: null, action: 'site.sign-in', body: AcceptInvitation, response: Session },
-  saveProfile: { method: 'put', path: '/api/me', on: 'site', param: null, action: 'site.contribute', body: Profile, response: Me },
+  askReset: {
+    method: 'post',
+    path: '/api/password-resets',
+    on: 'site',
+    param: null,
+    action: 'site.sign-in',
+    body: AskPasswordReset,
+  },
+  reset: {
+    method: 'put',
+    path: '/api/password-resets',
+    on: 'site',
+    param: null,
+    action: 'site.sign-in',
+    body: ResetPassword,
+  },
+  readInvitation: {
+    method: 'get',
+    path: '/api/invitations/:token',
+    on: 'site',
+    param: null,
+    action: 'site.sign-in',
+    response: InvitationView,
+  },
+  accept: {
+    method: 'post',
+    path: '/api/invitations/accept',
+    on: 'site',
+    param: null,
+    action: 'site.sign-in',
+    body: AcceptInvitation,
+    response: Session,
+  },
+  saveProfile: {
+    method: 'put',
+    path: '/api/me',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    body: Profile,
+    response: Me,
+  },
   /** multipart form with one file `portrait` */
-  savePortrait: { method: 'put', path: '/api/me/portrait', on: 'site', param: null, action: 'site.contribute', response: Me },
+  savePortrait: {
+    method: 'put',
+    path: '/api/me/portrait',
+    on: 'site',
+    param: null,
+    action: 'site.contribute',
+    response: Me,
+  },
 });

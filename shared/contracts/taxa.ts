@@ -44,7 +44,29 @@ export const NewTaxon = z.strictObject({
 export type NewTaxon = z.infer<typeof NewTaxon>;
 
 export const taxonRoutes = defineRoutes({
-  names: { method: 'get', path: '/api/taxa', on: 'site', param: null, action: 'site.read', response: z.array(TaxonName) },
-  read: { method: 'get', path: '/api/taxa/:taxonId', on: 'site', param: null, action: 'site.read', response: TaxonView },
-  add: { method: 'post', path: '/api/taxa', on: 'site', param: null, action: 'taxa.add', body: NewTaxon, response: TaxonName },
+  names: {
+    method: 'get',
+    path: '/api/taxa',
+    on: 'site',
+    param: null,
+    action: 'site.read',
+    response: z.array(TaxonName),
+  },
+  read: {
+    method: 'get',
+    path: '/api/taxa/:taxonId',
+    on: 'site',
+    param: null,
+    action: 'site.read',
+    response: TaxonView,
+  },
+  add: {
+    method: 'post',
+    path: '/api/taxa',
+    on: 'site',
+    param: null,
+    action: 'taxa.add',
+    body: NewTaxon,
+    response: TaxonName,
+  },
 });

@@ -7,9 +7,7 @@
 export const ROLES = ['photographer', 'identifier', 'editor', 'keeper'] as const;
 export type Role = (typeof ROLES)[number];
 
-export type Actor =
-  | { readonly kind: 'visitor' }
-  | { readonly kind: 'user'; readonly id: string; readonly role: Role };
+export type Actor = { readonly kind: 'visitor' } | { readonly kind: 'user'; readonly id: string; readonly role: Role };
 
 export const VISITOR: Actor = { kind: 'visitor' };
 
@@ -97,16 +95,11 @@ function canFind(actor: Actor, action: ActionsOn['find'], find: FindThing, today
     case 'find.decide':
       return owns;
     case 'find.determine':
-      return (
-        owns ||
-        (actor.kind === 'user' && actor.role === 'identifier' && canFind(actor, 'find.read', find, today))
-      );
+      return owns || (actor.kind === 'user' && actor.role === 'identifier' && canFind(actor, 'find.read', find, today));
     case 'find.read-exact-place':
       return (
         owns ||
-        (actor.kind === 'user' &&
-          find.placeReaders.includes(actor.id) &&
-          canFind(actor, 'find.read', find, today))
+        (actor.kind === 'user' && find.placeReaders.includes(actor.id) && canFind(actor, 'find.read', find, today))
       );
   }
 }
@@ -146,8 +139,7 @@ function canSite(actor: Actor, action: ActionsOn['site']): boolean {
 /** Whether everybody, signed in or not, sees this find. */
 export function isPublic(find: Pick<FindThing, 'visibility' | 'heldUntil'>, today: string): boolean {
   return (
-    find.visibility === 'public' ||
-    (find.visibility === 'held' && find.heldUntil !== null && find.heldUntil <= today)
+    find.visibility === 'public' || (find.visibility === 'held' && find.heldUntil !== null && find.heldUntil <= today)
   );
 }
 
