@@ -1,0 +1,28 @@
+import { provideHttpClient, withFetch } from '@angular/common/http';
+import { inject, provideAppInitializer, provideBrowserGlobalErrorListeners, type ApplicationConfig } from '@angular/core';
+import { provideClientHydration, withHttpTransferCacheOptions } from '@angular/platform-browser';
+import { provideRouter, TitleStrategy, withComponentInputBinding, withInMemoryScrolling } from '@angular/router';
+import { routes } from './app.routes';
+import { PageTitleStrategy } from './core/page-title';
+import { SessionStore } from './core/session-store';
+
+export const appConfig: ApplicationConfig = {
+  providers: [
+    provideBrowserGlobalErrorListeners(),
+    provideRouter(
+      routes,
+      withComponentInputBinding(),
+      withInMemoryScrolling({ scrollPositionRestoration: 'enabled', anchorScrolling: 'enabled' }),
+    ),
+    provideHttpClient(withFetch()), // Angular's own XSRF-TOKEN cookie and X-XSRF-TOKEN header are on by default
+    // No event replay: it needs an inline script, which the content security policy refuses.
+    provideClientHydration(
+      withHttpTransferCacheOptions({
+        // What the server rendered is a visitor's view; somebody signed in asks again.
+        filter: () => !inject(SessionStore).user(),
+      }),
+    ),
+    provideAppInitializer(() => inject(SessionStore).restore()),
+    { provide: TitleStrategy, useClass: PageTitleStrategy },
+  ],
+};

@@ -1,0 +1,43 @@
+import { DOCUMENT, inject, Component, ChangeDetectionStrategy, effect } from '@angular/core';
+import { toSignal } from '@angular/core/rxjs-interop';
+import { NavigationEnd, Router, RouterOutlet, type ActivatedRouteSnapshot } from '@angular/router';
+import { filter, map, startWith } from 'rxjs';
+import { Footer } from './core/shell/footer';
+import { Header } from './core/shell/header';
+
+/** The frame of every page. In the dark room there is no frame. */
+@Component({
+  selector: 'app-root',
+  imports: [RouterOutlet, Header, Footer],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  templateUrl: './app.html',
+  styleUrl: './app.scss',
+})
+export class App {
+  private readonly router = inject(Router);
+  private readonly document = inject(DOCUMENT);
+
+  protected readonly darkRoom = toSignal(
+    this.router.events.pipe(
+      filter((event) => event instanceof NavigationEnd),
+      startWith(null),
+      map(() => deepest(this.router.routerState.snapshot.root).data['darkRoom'] === true),
+    ),
+    { initialValue: false },
+  );
+
+  constructor() {
+    // On the root element, so that menus and dialogs, which hang on the body, are dark too.
+    effect(() => this.document.documentElement.classList.toggle('dark-room', this.darkRoom()));
+  }
+
+  /** By hand: with `<base href="/">` a bare `#content` would lead to the gallery. */
+  protected skipToContent(event: Event): void {
+    event.preventDefault();
+    this.document.getElementById('content')?.focus();
+  }
+}
+
+function deepest(route: ActivatedRouteSnapshot): ActivatedRouteSnapshot {
+  return route.firstChild ? deepest(route.firstChild) : route;
+}
