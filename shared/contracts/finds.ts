@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { SENSITIVITIES } from '../place/generalise.js';
 import { Day, Id, line, NameView, PersonRef, prose, Visibility } from './common.js';
 import { ImageRole, ImageTile, Light } from './images.js';
 import { defineRoutes } from './route.js';
@@ -8,7 +9,7 @@ export const OBSERVATION_KINDS = ['in the field', 'at the bench', 'revisit', 'cu
 export const ObservationKind = z.enum(OBSERVATION_KINDS);
 
 /** How far the public place is generalised: Chapman 2020, categories 1–4, or none. */
-export const SENSITIVITIES = ['none', 'low', 'medium', 'high', 'extreme'] as const;
+export { SENSITIVITIES };
 export const Sensitivity = z.enum(SENSITIVITIES);
 
 /** The exact place: for the finder and those named. Its words never become public by themselves. */
