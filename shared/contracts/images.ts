@@ -69,6 +69,8 @@ export const TrayPicture = z.strictObject({
   capture: z.nullable(Capture),
   /** the file carries a place; it is kept and shown to its owner alone */
   exactPlace: z.nullable(z.strictObject({ latitude: z.number(), longitude: z.number() })),
+  role: ImageRole,
+  light: Light,
   image: z.nullable(ImageTile),
   uploadedAt: z.string(),
 });
