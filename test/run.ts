@@ -89,7 +89,9 @@ rmSync(reports, { recursive: true, force: true });
 
 process.stdout.write('\n');
 for (const { name, passed, failed } of results) {
-  process.stdout.write(`${name.padEnd(10)} ${String(passed).padStart(5)} passed ${String(failed).padStart(5)} failed\n`);
+  process.stdout.write(
+    `${name.padEnd(10)} ${String(passed).padStart(5)} passed ${String(failed).padStart(5)} failed\n`,
+  );
 }
 const sum = (key: 'passed' | 'failed'): number => results.reduce((total, result) => total + result[key], 0);
 process.stdout.write(`\n${sum('passed')} passed, ${sum('failed')} failed\n`);
