@@ -5,8 +5,10 @@ import type { Logger } from 'pino';
 import type { Clock } from './clock.js';
 import type { Config } from './config.js';
 import type { Database } from './db/database.js';
+import { JobTable } from './db/jobs.js';
 import { ThingTable } from './db/things.js';
 import { UserTable } from './db/users.js';
+import { JobRunner } from './jobs/job-runner.js';
 import { problems, unknownPath } from './middleware/problems.js';
 import { security } from './middleware/security.js';
 import { sessions } from './middleware/session.js';
@@ -28,6 +30,7 @@ export interface AppOptions {
 
 export interface App {
   readonly express: Express;
+  readonly jobs: JobRunner;
   /** starts background work: jobs, outgoing mail */
   start(): void;
   /** ends background work and waits for what runs */
@@ -41,6 +44,10 @@ export function createApp({ config, db, clock, log, forTests = false }: AppOptio
   const passwords = new Passwords(forTests);
   const users = new UserTable(db);
   const people = new PeopleService(users, config.demo);
+
+  const jobTable = new JobTable(db);
+  // how a job of each kind is done; call `jobs.nudge()` after the transaction that enqueued one
+  const jobs = new JobRunner({ jobs: jobTable, clock, log, handlers: {} });
 
   const app = express();
   app.disable('x-powered-by');
@@ -63,11 +70,12 @@ export function createApp({ config, db, clock, log, forTests = false }: AppOptio
 
   return {
     express: app,
+    jobs,
     start() {
-      return undefined;
+      jobs.start();
     },
-    stop() {
-      return Promise.resolve();
+    async stop() {
+      await jobs.stop();
     },
   };
 }
