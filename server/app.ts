@@ -1,22 +1,38 @@
+import { join } from 'node:path';
 import compression from 'compression';
 import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import type { Logger } from 'pino';
-import type { Clock } from './clock.js';
+import { type Clock, instant, today } from './clock.js';
 import type { Config } from './config.js';
+import { CounterTable } from './db/counters.js';
 import type { Database } from './db/database.js';
 import { JobTable } from './db/jobs.js';
+import { MailTable } from './db/mails.js';
+import { KeptOriginals } from './db/kept-originals.js';
+import { SessionTable } from './db/sessions.js';
 import { ThingTable } from './db/things.js';
+import { TokenTable } from './db/tokens.js';
 import { UserTable } from './db/users.js';
 import { JobRunner } from './jobs/job-runner.js';
+import { Postbox } from './mail/postbox.js';
+import { LocalMail, type MailTransport } from './mail/transport.js';
+import { limiters, LIMITS, type Limits } from './middleware/limits.js';
 import { problems, unknownPath } from './middleware/problems.js';
 import { security } from './middleware/security.js';
+import { seen } from './middleware/seen.js';
 import { sessions } from './middleware/session.js';
 import { xsrf as createXsrf } from './middleware/xsrf.js';
+import { builtApplication, createPages, type PageOptions } from './pages.js';
 import { Passwords } from './passwords.js';
+import { mountKeep } from './routes/keep.js';
 import { Mount } from './routes/mount.js';
 import { mountSession } from './routes/session.js';
 import { sessionSecret } from './secret.js';
+import { IntegrityService } from './services/integrity.js';
+import { InvitationService } from './services/invitations.js';
+import { KeepService } from './services/keep.js';
+import { PasswordResetService } from './services/password-resets.js';
 import { PeopleService } from './services/people.js';
 
 export interface AppOptions {
@@ -26,6 +42,12 @@ export interface AppOptions {
   readonly log: Logger;
   /** in tests: cheap password hashes, answers held against their contracts */
   readonly forTests?: boolean;
+  /** left out: what is generous to people and stops guessing machines */
+  readonly limits?: Limits;
+  /** left out: `.eml` files in the data folder */
+  readonly mail?: MailTransport;
+  /** left out: the built application and its own rendering */
+  readonly pages?: Pick<PageOptions, 'folder' | 'load'>;
 }
 
 export interface App {
@@ -33,21 +55,44 @@ export interface App {
   readonly jobs: JobRunner;
   /** starts background work: jobs, outgoing mail */
   start(): void;
+  /** the link by which the first keeper comes in; null when there are people */
+  firstKeeperLink(): Promise<string | null>;
   /** ends background work and waits for what runs */
   stop(): Promise<void>;
 }
 
 /** The composition root: tables, services, routes. */
-export function createApp({ config, db, clock, log, forTests = false }: AppOptions): App {
+export function createApp(options: AppOptions): App {
+  const { config, db, clock, log, forTests = false, limits = LIMITS } = options;
   const https = config.publicUrl.startsWith('https:');
   const secret = sessionSecret(config);
   const passwords = new Passwords(forTests);
   const users = new UserTable(db);
-  const people = new PeopleService(users, config.demo);
+  const people = new PeopleService(users, config.demo, clock);
 
   const jobTable = new JobTable(db);
   // how a job of each kind is done; call `jobs.nudge()` after the transaction that enqueued one
-  const jobs = new JobRunner({ jobs: jobTable, clock, log, handlers: {} });
+  const jobs = new JobRunner({ jobs: jobTable, clock, log, handlers: { mail: ({ about }) => postbox.deliver(about) } });
+
+  const mails = new MailTable(db);
+  const transport = options.mail ?? new LocalMail(join(config.dataDir, 'mail'), config.publicUrl);
+  const postbox = new Postbox(mails, transport, clock, async (trx, mailId) => {
+    await jobTable.enqueue(trx, { kind: 'mail', about: mailId, now: instant(clock) });
+    trx.executionPromise.then(
+      () => jobs.nudge(),
+      () => undefined, // rolled back: there is no mail
+    );
+  });
+  const sessionTable = new SessionTable(db, clock);
+  const tokens = new TokenTable(db);
+  const { publicUrl } = config;
+  const invitations = new InvitationService({ db, users, tokens, postbox, passwords, clock, publicUrl });
+  const resets = new PasswordResetService({
+    ...{ db, users, tokens, sessions: sessionTable, postbox, passwords, clock, publicUrl },
+    ...(forTests && { pause: () => Promise.resolve() }),
+  });
+  const keep = new KeepService({ db, users, invitations, mails, jobTable, runner: jobs, clock });
+  const integrity = new IntegrityService(new KeptOriginals(db), config.dataDir, clock);
 
   const app = express();
   app.disable('x-powered-by');
@@ -57,15 +102,27 @@ export function createApp({ config, db, clock, log, forTests = false }: AppOptio
     res.type('text').send('ok');
   });
 
-  const { handlers, passport } = sessions({ db, users, passwords, clock, secret, secure: https });
+  const { handlers, passport } = sessions({ store: sessionTable, users, passwords, secret, secure: https });
   const xsrf = createXsrf({ secret, secure: https });
-  app.use(cookieParser(), handlers);
+  const pages = createPages({
+    ...{ folder: builtApplication(), ...options.pages, publicUrl, port: config.port, xsrf, log },
+    publicRevision: () => new CounterTable(db).read('public-revision'),
+    day: () => today(clock),
+  });
+  app.use(pages.files, cookieParser(), handlers, seen(people));
   app.use('/api', express.json({ limit: '2mb' }), xsrf.protect);
 
   const mount = new Mount(app, new ThingTable(db.read), clock, forTests);
-  mountSession(mount, { people, passport, xsrf });
+  const limit = limiters(limits);
+  app.post('/api/session', limit.signIn);
+  app.post('/api/password-resets', limit.askReset);
+  app.put('/api/password-resets', limit.links);
+  app.post('/api/invitations/accept', limit.links);
+  mountSession(mount, { people, resets, invitations, passport, xsrf });
+  mountKeep(mount, { keep, invitations, integrity });
 
   app.use('/api', unknownPath);
+  app.use(pages.pages);
   app.use(problems(log));
 
   return {
@@ -74,6 +131,7 @@ export function createApp({ config, db, clock, log, forTests = false }: AppOptio
     start() {
       jobs.start();
     },
+    firstKeeperLink: () => invitations.forFirstKeeper(),
     async stop() {
       await jobs.stop();
     },

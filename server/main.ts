@@ -18,6 +18,9 @@ async function main(): Promise<void> {
   });
   app.start();
   log.info(`Motebook is open at ${config.publicUrl}`);
+  const link = await app.firstKeeperLink();
+  if (link)
+    process.stdout.write(`\nNobody is here yet. Whoever opens this link becomes the first keeper:\n  ${link}\n\n`);
 
   const stop = (): void => {
     server.close(() => {

@@ -1,3 +1,4 @@
+import type { Knex } from 'knex';
 import { Store, type SessionData } from 'express-session';
 import type { Clock } from '../clock.js';
 import type { Database } from './database.js';
@@ -41,6 +42,19 @@ export class SessionTable extends Store {
 
   override touch(sid: string, session: SessionData, done: () => void = () => undefined): void {
     settle(this.prolong(sid, session), done);
+  }
+
+  /** Signs a person out everywhere but in the session `keep`. */
+  async endAllOf(userId: string, { keep, knex = this.db.write }: { keep: string | null; knex?: Knex }): Promise<void> {
+    await knex('sessions')
+      .where({ user_id: userId })
+      .whereNot('sid', keep ?? '')
+      .delete();
+  }
+
+  /** Clears away what has lapsed. */
+  async sweep(): Promise<void> {
+    await this.db.write('sessions').where('expires_at', '<=', this.clock.now().toISOString()).delete();
   }
 
   private async read(sid: string): Promise<SessionData | null> {

@@ -1,3 +1,4 @@
+import type { Knex } from 'knex';
 import type { Licence } from '../../shared/contracts/common.js';
 import type { Role } from '../../shared/permission/can.js';
 import type { Database } from './database.js';
@@ -33,14 +34,14 @@ interface Row {
 export class UserTable {
   constructor(private readonly db: Database) {}
 
-  async find(id: string): Promise<User | null> {
-    const row = await this.db.read<Row>('users').where({ id }).first();
+  async find(id: string, knex: Knex = this.db.read): Promise<User | null> {
+    const row = await knex<Row>('users').where({ id }).first();
     return row ? toUser(row) : null;
   }
 
   /** with the password's hash, for signing in alone */
-  async findByEmail(email: string): Promise<(User & { passwordHash: string }) | null> {
-    const row = await this.db.read<Row>('users').where({ email: email.toLowerCase() }).first();
+  async findByEmail(email: string, knex: Knex = this.db.read): Promise<(User & { passwordHash: string }) | null> {
+    const row = await knex<Row>('users').where({ email: email.toLowerCase() }).first();
     return row ? { ...toUser(row), passwordHash: row.password_hash } : null;
   }
 
@@ -48,7 +49,17 @@ export class UserTable {
     return (await this.db.read<Row>('users').orderBy('name')).map(toUser);
   }
 
-  async insert(user: Omit<User, 'lastSeenAt'> & { passwordHash: string }, knex = this.db.write): Promise<void> {
+  async isEmpty(): Promise<boolean> {
+    return (await this.db.read<Row>('users').select('id').first()) === undefined;
+  }
+
+  async countOf(role: Role, knex: Knex = this.db.read): Promise<number> {
+    const row = (await knex<Row>('users').where({ role }).count({ count: '*' }).first()) as
+      { count: number } | undefined;
+    return row?.count ?? 0;
+  }
+
+  async insert(user: Omit<User, 'lastSeenAt'> & { passwordHash: string }, knex: Knex = this.db.write): Promise<void> {
     const { passwordHash, ...rest } = user;
     await knex('users').insert({
       ...toColumns(rest),
@@ -58,12 +69,21 @@ export class UserTable {
     });
   }
 
-  async update(id: string, change: Partial<Omit<User, 'id' | 'createdAt'>>): Promise<void> {
-    await this.db.write('users').where({ id }).update(toColumns(change));
+  async update(id: string, change: Partial<Omit<User, 'id' | 'createdAt'>>, knex: Knex = this.db.write): Promise<void> {
+    await knex('users').where({ id }).update(toColumns(change));
   }
 
-  async setPasswordHash(id: string, passwordHash: string): Promise<void> {
-    await this.db.write('users').where({ id }).update({ password_hash: passwordHash });
+  /** @param day  UTC date of `at`: nothing is written twice on one day */
+  async seen(id: string, at: string, day: string): Promise<void> {
+    await this.db
+      .write<Row>('users')
+      .where({ id })
+      .where((either) => either.whereNull('last_seen_at').orWhere('last_seen_at', '<', day))
+      .update({ last_seen_at: at });
+  }
+
+  async setPasswordHash(id: string, passwordHash: string, knex: Knex = this.db.write): Promise<void> {
+    await knex('users').where({ id }).update({ password_hash: passwordHash });
   }
 }
 

@@ -1,6 +1,7 @@
 import type {} from 'passport';
 import type { Request } from 'express';
 import { type Actor, type Role, VISITOR } from '../../shared/permission/can.js';
+import { NotSignedIn } from '../problem.js';
 
 declare global {
   // eslint-disable-next-line @typescript-eslint/no-namespace -- how Express types are extended
@@ -10,6 +11,8 @@ declare global {
       id: string;
       role: Role;
       name: string;
+      /** instant; null until the first visit */
+      lastSeenAt: string | null;
     }
   }
 }
@@ -17,4 +20,13 @@ declare global {
 /** Who asks. */
 export function actorOf(req: Request): Actor {
   return req.user ? { kind: 'user', id: req.user.id, role: req.user.role } : VISITOR;
+}
+
+/**
+ * The id of the person who asks, on routes that only signed-in people pass.
+ * @throws {NotSignedIn}
+ */
+export function userIdOf(actor: Actor): string {
+  if (actor.kind !== 'user') throw new NotSignedIn();
+  return actor.id;
 }

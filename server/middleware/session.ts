@@ -2,9 +2,7 @@ import type { RequestHandler } from 'express';
 import session from 'express-session';
 import { Passport } from 'passport';
 import { Strategy as LocalStrategy } from 'passport-local';
-import type { Clock } from '../clock.js';
-import type { Database } from '../db/database.js';
-import { SessionTable } from '../db/sessions.js';
+import type { SessionTable } from '../db/sessions.js';
 import type { UserTable } from '../db/users.js';
 import type { Passwords } from '../passwords.js';
 
@@ -13,14 +11,13 @@ export const SESSION_COOKIE = 'motebook';
 
 /** Sessions in the database, and passport that restores who is signed in. */
 export function sessions(options: {
-  db: Database;
+  store: SessionTable;
   users: UserTable;
   passwords: Passwords;
-  clock: Clock;
   secret: string;
   secure: boolean;
 }): { handlers: RequestHandler[]; passport: InstanceType<typeof Passport> } {
-  const { db, users, passwords, clock, secret, secure } = options;
+  const { store, users, passwords, secret, secure } = options;
   const passport = new Passport();
   passport.use(
     new LocalStrategy({ usernameField: 'email' }, (email, password, done) => {
@@ -46,7 +43,7 @@ export function sessions(options: {
       session({
         name: SESSION_COOKIE,
         secret,
-        store: new SessionTable(db, clock),
+        store,
         resave: false,
         saveUninitialized: false,
         cookie: { httpOnly: true, sameSite: 'lax', secure, maxAge: TWO_WEEKS_MS },

@@ -1,15 +1,25 @@
 import type { Request } from 'express';
 import type { Passport } from 'passport';
 import { sessionRoutes } from '../../shared/contracts/session.js';
+import { userIdOf } from '../middleware/actor.js';
 import type { Xsrf } from '../middleware/xsrf.js';
 import { HttpProblem } from '../problem.js';
+import type { InvitationService } from '../services/invitations.js';
+import type { PasswordResetService } from '../services/password-resets.js';
 import type { PeopleService } from '../services/people.js';
 import type { Mount } from './mount.js';
 
-export function mountSession(
-  mount: Mount,
-  { people, passport, xsrf }: { people: PeopleService; passport: InstanceType<typeof Passport>; xsrf: Xsrf },
-): void {
+export interface SessionServices {
+  readonly people: PeopleService;
+  readonly resets: PasswordResetService;
+  readonly invitations: InvitationService;
+  readonly passport: InstanceType<typeof Passport>;
+  readonly xsrf: Xsrf;
+}
+
+/** Signing in and out, coming in by invitation, a forgotten password, the own profile. */
+export function mountSession(mount: Mount, services: SessionServices): void {
+  const { people, resets, invitations, passport, xsrf } = services;
   mount.route(sessionRoutes.read, ({ req, res }) => {
     xsrf.give(req, res);
     return people.session(req.user?.id ?? null);
@@ -32,6 +42,19 @@ export function mountSession(
     });
     xsrf.give(req, res, { fresh: true });
   });
+
+  mount.route(sessionRoutes.askReset, ({ body }) => resets.ask(body.email));
+  mount.route(sessionRoutes.reset, ({ body, req }) => resets.reset(body, req.sessionID));
+
+  mount.route(sessionRoutes.readInvitation, ({ params }) => invitations.read(params['token'] ?? ''));
+  mount.route(sessionRoutes.accept, async ({ body, req, res }) => {
+    const user = await invitations.accept(body);
+    await logIn(req, user);
+    xsrf.give(req, res, { fresh: true });
+    return people.session(user.id);
+  });
+
+  mount.route(sessionRoutes.saveProfile, ({ actor, body }) => people.saveProfile(userIdOf(actor), body));
 }
 
 function authenticate(passport: InstanceType<typeof Passport>, req: Request): Promise<Express.User | null> {

@@ -13,7 +13,9 @@ export const PersonRow = z.strictObject({
   createdAt: z.string(),
   lastSeenAt: z.nullable(z.string()),
 });
+export type PersonRow = z.infer<typeof PersonRow>;
 export const InvitationRow = z.strictObject({ id: Id, email: z.string(), role: Role, expiresAt: z.string() });
+export type InvitationRow = z.infer<typeof InvitationRow>;
 export const PeopleView = z.strictObject({ people: z.array(PersonRow), invitations: z.array(InvitationRow) });
 export type PeopleView = z.infer<typeof PeopleView>;
 

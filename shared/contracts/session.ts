@@ -43,14 +43,21 @@ export type AskPasswordReset = z.infer<typeof AskPasswordReset>;
 export const ResetPassword = z.strictObject({ token: line(200), password: Password });
 export type ResetPassword = z.infer<typeof ResetPassword>;
 
+/** `email` null: the first keeper's invitation, printed where the server was started; whoever takes it says theirs. */
 export const InvitationView = z.strictObject({
-  email: z.string(),
+  email: z.nullable(z.string()),
   role: Role,
   invitedBy: z.string(),
   expiresAt: z.string(),
 });
 export type InvitationView = z.infer<typeof InvitationView>;
-export const AcceptInvitation = z.strictObject({ token: line(200), name: line(80), password: Password });
+/** `email` only where the invitation names none; otherwise it is left out, and ignored. */
+export const AcceptInvitation = z.strictObject({
+  token: line(200),
+  name: line(80),
+  password: Password,
+  email: z.optional(Email),
+});
 export type AcceptInvitation = z.infer<typeof AcceptInvitation>;
 
 export const sessionRoutes = defineRoutes({

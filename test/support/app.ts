@@ -3,7 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { pino } from 'pino';
 import request from 'supertest';
-import { type App, createApp } from '../../server/app.js';
+import { type App, type AppOptions, createApp } from '../../server/app.js';
 import type { Clock } from '../../server/clock.js';
 import { type Config, readConfig } from '../../server/config.js';
 import { type Database, openDatabase } from '../../server/db/database.js';
@@ -43,12 +43,16 @@ export class TestApp {
     readonly app: App,
   ) {}
 
-  static async open(env: Record<string, string> = {}): Promise<TestApp> {
+  static async open(
+    env: Record<string, string> = {},
+    options: Partial<Pick<AppOptions, 'limits' | 'mail' | 'pages'>> = {},
+  ): Promise<TestApp> {
     const dataDir = mkdtempSync(join(tmpdir(), 'motebook-test-'));
     const config = readConfig({ DATA_DIR: dataDir, DEMO: 'off', LOG_LEVEL: 'silent', ...env });
     const db = await openDatabase(config.dataDir);
     const clock = new TestClock();
-    const app = createApp({ config, db, clock, log: pino({ level: process.env["TEST_LOG"] ?? config.logLevel }), forTests: true });
+    const log = pino({ level: process.env['TEST_LOG'] ?? config.logLevel });
+    const app = createApp({ config, db, clock, log, forTests: true, ...options });
     return new TestApp(config, db, clock, app);
   }
 
@@ -117,7 +121,12 @@ export class Browser {
   }
 
   xsrfToken(): string {
-    const cookie = this.agent.jar.getCookie('XSRF-TOKEN', { domain: '127.0.0.1', path: '/', secure: false, script: false });
+    const cookie = this.agent.jar.getCookie('XSRF-TOKEN', {
+      domain: '127.0.0.1',
+      path: '/',
+      secure: false,
+      script: false,
+    });
     return decodeURIComponent(cookie?.value ?? '');
   }
 }
