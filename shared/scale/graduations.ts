@@ -8,17 +8,19 @@ import type { Graduation } from './calibration.js';
  *
  * @param marks     2 or more, image px, none left out between the first and the last
  * @param spacingUm distance of neighbouring graduations, µm
- * @returns in order along the ruling, the first at 0 µm; which end is first doesn't matter
+ * @returns in order along the ruling, the left end at 0 µm (the upper one of an upright ruling)
  * @throws {DomainError} `too-few-graduations`; `not-positive`; `not-finite`
  */
 export function graduationsFromMarks(marks: readonly ImagePoint[], spacingUm: number): Graduation[] {
   requirePositive(spacingUm, 'spacingUm');
   requireFinite(marks.flatMap((mark) => [mark.x, mark.y]), 'marks');
-  const first = farthestFrom(marks, marks[0]);
-  const last = farthestFrom(marks, first);
-  if (!first || !last || marks.length < 2) {
+  const oneEnd = farthestFrom(marks, marks[0]);
+  const otherEnd = farthestFrom(marks, oneEnd);
+  if (!oneEnd || !otherEnd || marks.length < 2) {
     throw new DomainError('too-few-graduations', `Has ${marks.length} graduations; needs 2.`, { count: marks.length });
   }
+  const oneIsFirst = oneEnd.x - otherEnd.x || oneEnd.y - otherEnd.y;
+  const [first, last] = oneIsFirst < 0 ? [oneEnd, otherEnd] : [otherEnd, oneEnd];
   const along = (mark: ImagePoint) => (mark.x - first.x) * (last.x - first.x) + (mark.y - first.y) * (last.y - first.y);
   return [...marks]
     .sort((a, b) => along(a) - along(b))

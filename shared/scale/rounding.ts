@@ -1,6 +1,6 @@
 import { requireFinite, requireNotNegative, requirePositive } from '../errors.js';
 import { MICROMETRES_PER, MILLIMETRES_FROM_UM, NO_BREAK_SPACE, unitFor } from '../units/length.js';
-import { decimalsFor, leadingPower, roundDecimal } from './decimals.js';
+import { decimalsFor, leadingPower, roundDecimal } from '../units/decimals.js';
 import type { Scale } from './scale.js';
 import { expanded } from './uncertainty.js';
 
@@ -108,7 +108,7 @@ function estimatedParts(valueUm: number, UUm: number): QuantityParts {
   const lowDecimals = least === 0 ? decimals : Math.max(decimals, significant - 1 - leadingPower(least));
   return {
     approx: true,
-    value: roundDecimal(value, decimals),
+    value: roundDecimal(value, decimalsFor(value, significant)),
     uncertainty: U === 0 ? '0' : roundDecimal(U, Math.max(decimals, -leadingPower(U)), 'ceil'),
     unit,
     low: least === 0 ? '0' : roundDecimal(least, lowDecimals, 'floor'),

@@ -1,5 +1,5 @@
 import { requirePositive } from '../errors.js';
-import { roundDecimal } from '../scale/decimals.js';
+import { roundDecimal } from '../units/decimals.js';
 import { requireCount } from '../statistics/intervals.js';
 import { quantile } from '../statistics/quantiles.js';
 import { summarise } from '../statistics/summary.js';

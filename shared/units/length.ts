@@ -1,4 +1,5 @@
 import { DomainError } from '../errors.js';
+import { roundDecimal } from './decimals.js';
 
 /** A length in micrometres, the one unit that lengths are stored in. */
 export type Micrometres = number;
@@ -51,5 +52,5 @@ export function unitFor(um: Micrometres): 'µm' | 'mm' {
 export function formatLength(um: Micrometres, digits: number): string {
   if (!Number.isFinite(um)) throw new DomainError('not-finite', `A length must be finite, was ${um}.`);
   const unit = unitFor(um);
-  return `${(um / MICROMETRES_PER[unit]).toFixed(digits)}${NO_BREAK_SPACE}${unit}`;
+  return `${roundDecimal(um / MICROMETRES_PER[unit], digits)}${NO_BREAK_SPACE}${unit}`;
 }
