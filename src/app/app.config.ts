@@ -1,7 +1,18 @@
 import { provideHttpClient, withFetch } from '@angular/common/http';
-import { inject, provideAppInitializer, provideBrowserGlobalErrorListeners, type ApplicationConfig } from '@angular/core';
-import { provideClientHydration, withHttpTransferCacheOptions } from '@angular/platform-browser';
-import { provideRouter, TitleStrategy, withComponentInputBinding, withInMemoryScrolling } from '@angular/router';
+import {
+  inject,
+  provideAppInitializer,
+  provideBrowserGlobalErrorListeners,
+  type ApplicationConfig,
+} from '@angular/core';
+import { provideClientHydration } from '@angular/platform-browser';
+import {
+  provideRouter,
+  TitleStrategy,
+  withComponentInputBinding,
+  withInMemoryScrolling,
+  withRouterConfig,
+} from '@angular/router';
 import { routes } from './app.routes';
 import { PageTitleStrategy } from './core/page-title';
 import { SessionStore } from './core/session-store';
@@ -12,16 +23,13 @@ export const appConfig: ApplicationConfig = {
     provideRouter(
       routes,
       withComponentInputBinding(),
+      // "Gallery" from far down in the gallery leads to its beginning.
+      withRouterConfig({ onSameUrlNavigation: 'reload' }),
       withInMemoryScrolling({ scrollPositionRestoration: 'enabled', anchorScrolling: 'enabled' }),
     ),
     provideHttpClient(withFetch()), // Angular's own XSRF-TOKEN cookie and X-XSRF-TOKEN header are on by default
     // No event replay: it needs an inline script, which the content security policy refuses.
-    provideClientHydration(
-      withHttpTransferCacheOptions({
-        // What the server rendered is a visitor's view; somebody signed in asks again.
-        filter: () => !inject(SessionStore).user(),
-      }),
-    ),
+    provideClientHydration(),
     provideAppInitializer(() => inject(SessionStore).restore()),
     { provide: TitleStrategy, useClass: PageTitleStrategy },
   ],

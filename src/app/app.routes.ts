@@ -6,12 +6,10 @@ export const routes: Routes = [
   {
     path: '',
     pathMatch: 'full',
-    title: $localize`Gallery`,
     loadComponent: async () => (await import('./features/gallery/gallery')).Gallery,
   },
   {
     path: 'finds/:findId',
-    title: $localize`Find`,
     loadComponent: async () => (await import('./features/find/find')).Find,
   },
   {
@@ -21,7 +19,6 @@ export const routes: Routes = [
   },
   {
     path: 'taxa/:taxonId',
-    title: $localize`Taxon`,
     loadComponent: async () => (await import('./features/taxa/taxon')).Taxon,
   },
   {

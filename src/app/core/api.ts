@@ -84,4 +84,3 @@ function presentOnly(query: Readonly<Record<string, unknown>> = {}): Record<stri
     ),
   );
 }
-

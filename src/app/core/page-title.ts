@@ -1,17 +1,14 @@
 import { inject, Injectable } from '@angular/core';
-import { Meta, Title } from '@angular/platform-browser';
+import { Title } from '@angular/platform-browser';
 import { TitleStrategy, type RouterStateSnapshot } from '@angular/router';
 
-/** "Sorting tray · Motebook"; the gallery is Motebook itself. Pages that know better use `PageMeta`. */
+/** "Sorting tray · Motebook". A route without a title is a page that says its own once it knows it (`PageMeta`). */
 @Injectable()
 export class PageTitleStrategy extends TitleStrategy {
   private readonly title = inject(Title);
-  private readonly meta = inject(Meta);
 
   override updateTitle(state: RouterStateSnapshot): void {
     const own = this.buildTitle(state);
-    this.title.setTitle(own ? `${own} · Motebook` : 'Motebook');
-    for (const property of ['og:title', 'og:description', 'og:image']) this.meta.removeTag(`property="${property}"`);
-    this.meta.removeTag('name="description"');
+    if (own) this.title.setTitle(`${own} · Motebook`);
   }
 }

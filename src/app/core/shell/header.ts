@@ -22,13 +22,20 @@ export class Header {
   private readonly themes = inject(ThemeStore);
   private readonly router = inject(Router);
 
-  protected readonly icons = { account: mdiAccountOutline, menu: mdiMenu, theme: mdiThemeLightDark, search: mdiMagnify };
+  protected readonly icons = {
+    account: mdiAccountOutline,
+    menu: mdiMenu,
+    theme: mdiThemeLightDark,
+    search: mdiMagnify,
+  };
   protected readonly user = this.session.user;
   protected readonly theme = this.themes.theme;
-  protected readonly themeChoices: readonly { readonly theme: Theme; readonly words: string }[] = THEMES.map((theme) => ({
-    theme,
-    words: { auto: $localize`As the system has it`, light: $localize`Light`, dark: $localize`Dark` }[theme],
-  }));
+  protected readonly themeChoices: readonly { readonly theme: Theme; readonly words: string }[] = THEMES.map(
+    (theme) => ({
+      theme,
+      words: { auto: $localize`As the system has it`, light: $localize`Light`, dark: $localize`Dark` }[theme],
+    }),
+  );
 
   protected choose(theme: Theme): void {
     this.themes.choose(theme);

@@ -1,9 +1,111 @@
-import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { Location } from '@angular/common';
+import { ChangeDetectionStrategy, Component, computed, effect, inject, input, untracked } from '@angular/core';
+import { MatButtonModule } from '@angular/material/button';
+import { Router, RouterLink } from '@angular/router';
+import { galleryRoutes, type GalleryTile } from '@shared/contracts/gallery';
+import { taxonRoutes } from '@shared/contracts/taxa';
+import { plainName } from '@shared/taxonomy/name';
+import { Api } from '../../core/api';
+import { PageMeta } from '../../core/page-meta';
+import { Empty } from '../../ui/empty/empty';
+import { renditionUrl } from '../../ui/picture/picture';
+import { ProblemBox } from '../../ui/problem/problem';
+import { Rule } from '../../ui/rule/rule';
+import { FilterLine } from './filter-line';
+import { GalleryStore, type GalleryFilter } from './gallery-store';
+import { Hero } from './hero';
+import { Wall } from './wall';
+import { WallSkeleton } from './wall-skeleton';
 
+/** The public gallery: the newest picture large, and below it the wall. What is looked for stands in the address. */
 @Component({
   selector: 'app-gallery',
+  imports: [MatButtonModule, RouterLink, Empty, FilterLine, Hero, ProblemBox, Rule, Wall, WallSkeleton],
   changeDetection: ChangeDetectionStrategy.OnPush,
-  template: `<h1 class="page-title" i18n>Gallery</h1>`,
-  host: { class: 'page' },
+  templateUrl: './gallery.html',
+  styleUrl: './gallery.scss',
 })
-export class Gallery {}
+export class Gallery {
+  private readonly store = inject(GalleryStore);
+  private readonly location = inject(Location);
+  private readonly router = inject(Router);
+
+  /** from the address */
+  readonly taxon = input<string>();
+  readonly q = input<string>();
+  readonly after = input<string>();
+
+  private readonly filter = computed<GalleryFilter>(() => {
+    const [taxon, q] = [this.taxon(), this.q()?.trim()];
+    return { ...(taxon ? { taxon } : {}), ...(q ? { q } : {}) };
+  });
+  protected readonly filtered = computed(() => Object.keys(this.filter()).length > 0);
+  private readonly held = computed(() => this.store.holds(this.filter(), this.after() ?? null));
+
+  protected readonly first = inject(Api).resource(galleryRoutes.page, () =>
+    this.held() ? undefined : { query: { ...this.filter(), after: this.after() } },
+  );
+  private readonly taxonView = inject(Api).resource(taxonRoutes.read, () => {
+    const taxonId = this.taxon();
+    return taxonId ? { params: { taxonId } } : undefined;
+  });
+  /** The name on the filter's chip; null until it is known, or when there is no such taxon. */
+  protected readonly taxonName = computed(() => (this.taxonView.hasValue() ? this.taxonView.value().name : null));
+
+  private readonly firstPage = computed(() => (this.first.hasValue() ? this.first.value() : null));
+  private readonly tiles = computed(() => (this.held() ? this.store.tiles() : (this.firstPage()?.tiles ?? [])));
+  protected readonly total = computed(() => (this.held() ? this.store.total() : (this.firstPage()?.total ?? 0)));
+  protected readonly next = computed(() => (this.held() ? this.store.next() : (this.firstPage()?.next ?? null)));
+  protected readonly state = computed(() => {
+    if (this.held() || this.first.hasValue()) return this.tiles().length > 0 ? 'wall' : 'empty';
+    return this.first.error() ? 'problem' : 'loading';
+  });
+
+  /** Only where the wall begins, and not over a search: there every picture counts the same. */
+  protected readonly hero = computed(() => (this.filtered() || this.after() ? null : heroOf(this.tiles())));
+  protected readonly wall = computed(() => this.tiles().filter((tile) => tile !== this.hero()));
+
+  protected readonly isLoadingMore = this.store.isLoadingMore;
+  protected readonly moreProblem = this.store.moreProblem;
+
+  constructor() {
+    // A click on "Gallery" asks for what is new; the way back asks for what was there.
+    if (this.router.currentNavigation()?.trigger !== 'popstate') this.store.forget();
+    effect(() => {
+      const page = this.firstPage();
+      if (page) untracked(() => this.store.begin(this.filter(), this.after() ?? null, page));
+    });
+    this.describe(inject(PageMeta));
+  }
+
+  protected more(): void {
+    void this.store.more();
+  }
+
+  /** Keeps the place in the address, so that it can be reloaded, sent and come back to. */
+  protected keepPlace(tile: GalleryTile): void {
+    const after = this.store.cursorAt(this.tiles().indexOf(tile));
+    const tree = this.router.createUrlTree(['/'], { queryParams: { ...this.filter(), ...(after ? { after } : {}) } });
+    const url = this.router.serializeUrl(tree);
+    // Not through the router: this is no navigation. Its state goes along, by which it knows where one had scrolled to.
+    if (url !== this.location.path()) this.location.replaceState(url, '', this.location.getState());
+  }
+
+  private describe(meta: PageMeta): void {
+    effect(() => {
+      const cover = this.hero() ?? this.tiles()[0] ?? null;
+      const name = this.taxonName();
+      meta.describe({
+        title: name ? plainName(name) : 'Motebook',
+        description: $localize`A gallery of very small living things in which every picture carries a scale that can be trusted.`,
+        image: cover ? renditionUrl(cover, Math.max(...cover.renditionWidths, 0)) : null,
+      });
+    });
+  }
+}
+
+/** The newest landscape picture with a scale; without one, the newest. */
+function heroOf(tiles: readonly GalleryTile[]): GalleryTile | null {
+  const good = tiles.find((tile) => tile.width / tile.height >= 1.2 && tile.scale && tile.scale.grounds !== 'none');
+  return good ?? tiles[0] ?? null;
+}

@@ -32,6 +32,8 @@ export class Rule {
 
   protected readonly percent = computed(() => {
     const progress = this.progress();
-    return progress === null || !Number.isFinite(progress) ? null : Math.round(Math.min(1, Math.max(0, progress)) * 100);
+    return progress === null || !Number.isFinite(progress)
+      ? null
+      : Math.round(Math.min(1, Math.max(0, progress)) * 100);
   });
 }
