@@ -1,9 +1,10 @@
 import type { BodyMeasure } from '../annotations/measure.js';
 import { requireNotNegative } from '../errors.js';
-import { combine, expanded, splitScale, welchSatterthwaite } from '../scale/uncertainty.js';
+import { combine, COVERAGE_FACTOR, splitScale, welchSatterthwaite } from '../scale/uncertainty.js';
 import { halfWidth95 } from '../statistics/coverage.js';
 import type { Interval } from '../statistics/intervals.js';
 import { meanInterval } from '../statistics/intervals.js';
+import { tQuantile } from '../statistics/student.js';
 import type { Summary } from '../statistics/summary.js';
 import { summarise } from '../statistics/summary.js';
 
@@ -22,7 +23,9 @@ export interface SeriesSummary extends Summary {
   readonly parts: { readonly scatter: number; readonly scale: number; readonly edge: number };
   /** combined standard uncertainty of the mean */
   readonly u: number;
-  /** expanded, k = 2: the figure to quote */
+  /** coverage factor of U: 2, or Student's t where fewer than twenty degrees of freedom make 2 too little */
+  readonly k: number;
+  /** expanded, k·u: the figure to quote, with its k */
   readonly U: number;
   /** effective degrees of freedom of u; null for no limit */
   readonly degreesOfFreedom: number | null;
@@ -84,18 +87,23 @@ export function summariseSeries(
     { u: scatter, degreesOfFreedom: scatterDegrees },
     { u: combine(parts.scale, edge), degreesOfFreedom: null },
   ]);
+  const k = effective < FEWEST_DEGREES_FOR_TWO ? tQuantile(0.975, effective) : COVERAGE_FACTOR;
   return {
     ...summary,
     quantity,
     scatterInterval: summary.sd === null ? null : meanInterval({ mean: summary.mean, sd: summary.sd, n: summary.n }),
     parts,
     u,
-    U: expanded(u),
+    k,
+    U: k * u,
     degreesOfFreedom: Number.isFinite(effective) ? effective : null,
     interval95: { low: summary.mean - half, high: summary.mean + half },
     k95: u === 0 ? null : half / u,
   };
 }
+
+/** From here on k = 2 holds 94 % or more; JCGM 100:2008 §G.6.6 would let 2 pass from about ten (from memory). */
+const FEWEST_DEGREES_FOR_TWO = 20;
 
 const NO_SCALE_ERROR = { relativeUncertainty: 0 };
 

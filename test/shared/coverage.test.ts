@@ -111,6 +111,7 @@ describe('coverage of the stated 95 % intervals', () => {
     ['thirty long ones, where the tolerance counts', 30, 86, 0, WHOLE],
     ['thirty by a short ruling, where it is all', 30, 40, 0, { ...WHOLE, spacingUm: 10 }],
   ])('of the mean of %s', (_, n, lengthUm, sdUm, setup) => {
+    let quoted = 0;
     expectHonest(
       share((random) => {
         const scale = calibrationScale([calibrate(random, setup)]);
@@ -120,9 +121,11 @@ describe('coverage of the stated 95 % intervals', () => {
           relativeScale: scale.relativeUncertainty,
           limitFraction: scale.limitFraction,
         });
+        if (summary && Math.abs(summary.mean - lengthUm) <= summary.U) quoted++;
         return summary !== null && summary.interval95.low <= lengthUm && lengthUm <= summary.interval95.high;
       }),
     );
+    expect(quoted / REPEATS).toBeGreaterThanOrEqual(0.935);
   });
 
   it('of the mean of thirty when the slide happens to be perfect and nobody knows', () => {

@@ -38,6 +38,9 @@ describe('series of thirty', () => {
     expectClose(scatterOnly?.scatterInterval?.low, scatterOnly?.interval95.low as number, 1e-9);
     const three = summariseSeries(thirty.slice(0, 3), { quantity: 'length', relativeScale: 0 });
     expectClose(three?.k95, 4.303, 1e-3); // t(0.975, 2)
+    expectClose(three?.k, 4.303, 1e-3);
+    expectClose(three?.U, 4.3026527 * (three?.u as number), 1e-6);
+    expect(scatterOnly?.k).toBe(2);
   });
 
   it('does not let the scale shrink with the number of bodies', () => {
