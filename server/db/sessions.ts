@@ -33,7 +33,7 @@ export class SessionTable extends Store {
       user_id: userIdOf(session),
       expires_at: this.endOf(session),
     };
-    settle(this.db.write('sessions').insert(row).onConflict('sid').merge(), done);
+    settle(this.write(row), done);
   }
 
   override destroy(sid: string, done: (error?: unknown) => void = () => undefined): void {
@@ -52,8 +52,9 @@ export class SessionTable extends Store {
       .delete();
   }
 
-  /** Clears away what has lapsed. */
-  async sweep(): Promise<void> {
+  /** Written at sign-in and sign-out alone; a good moment to clear away what has lapsed. */
+  private async write(row: Row & { user_id: string | null }): Promise<void> {
+    await this.db.write('sessions').insert(row).onConflict('sid').merge();
     await this.db.write('sessions').where('expires_at', '<=', this.clock.now().toISOString()).delete();
   }
 
