@@ -47,7 +47,7 @@ export interface AppOptions {
   /** left out: `.eml` files in the data folder */
   readonly mail?: MailTransport;
   /** left out: the built application and its own rendering */
-  readonly pages?: Pick<PageOptions, 'folder' | 'load'>;
+  readonly pages?: Pick<PageOptions, 'folder' | 'load' | 'patienceMs'>;
 }
 
 export interface App {

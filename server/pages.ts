@@ -30,6 +30,8 @@ export interface PageOptions {
   readonly publicRevision: () => Promise<number>;
   /** today's UTC date: finds that are held become public with the day alone */
   readonly day: () => string;
+  /** a visitor waits no longer for the server's rendering; then the browser renders by itself */
+  readonly patienceMs?: number;
   /** replaced in tests */
   readonly load?: () => Promise<Render>;
 }
@@ -49,8 +51,7 @@ interface RenderedPage {
   readonly location: string | null;
 }
 
-/** A visitor waits no longer for the server's rendering; the browser then renders by itself. */
-const RENDERING_TAKES_AT_MOST_MS = 3000;
+const PATIENCE_MS = 3000;
 const CACHED_PAGES = 400;
 const NOT_BUILT = 'Motebook is not built yet: run `npm run build`.';
 
@@ -126,12 +127,12 @@ class RenderedPages {
 
   /** null when the browser must do it: rendering failed or takes too long. */
   async page(req: Request): Promise<RenderedPage | null> {
-    const { log, publicRevision, day } = this.options;
+    const { log, publicRevision, day, patienceMs = PATIENCE_MS } = this.options;
     const key = `${await publicRevision()} ${day()} ${req.url}`;
     try {
       const kept = this.cache.get(key) ?? this.keep(key, this.render(req));
       const late = Symbol('late');
-      const first = await Promise.race([kept, wait(RENDERING_TAKES_AT_MOST_MS, late, { ref: false })]);
+      const first = await Promise.race([kept, wait(patienceMs, late, { ref: false })]);
       if (first !== late) return first as RenderedPage | null;
       log.warn({ url: req.url }, 'rendering takes too long; the browser renders');
     } catch (error) {
