@@ -45,7 +45,10 @@ export function pathPointing(points: readonly ImagePoint[], perPixel: PerPixel =
 
 function pieces(points: readonly ImagePoint[], perPixel: PerPixel): { x: number; y: number }[] {
   if (points.length < 2) throw new DomainError('too-few-points', `Has ${points.length} points; needs 2.`);
-  requireFinite(points.flatMap((point) => [point.x, point.y]), 'points');
+  requireFinite(
+    points.flatMap((point) => [point.x, point.y]),
+    'points',
+  );
   return points.slice(1).map((point, i) => {
     const before = points[i] as ImagePoint;
     return { x: (point.x - before.x) * perPixel.x, y: (point.y - before.y) * perPixel.y };

@@ -58,6 +58,9 @@ function moments(points: readonly ImagePoint[]) {
 function requirePolygon(points: readonly ImagePoint[]): ImagePoint {
   const first = points[0];
   if (!first || points.length < 3) throw new DomainError('too-few-points', `Has ${points.length} points; needs 3.`);
-  requireFinite(points.flatMap((point) => [point.x, point.y]), 'points');
+  requireFinite(
+    points.flatMap((point) => [point.x, point.y]),
+    'points',
+  );
   return first;
 }

@@ -82,8 +82,14 @@ export function fitCalibration(input: {
   requireNotNegative(pointingPx, 'pointingPx');
   requireDistinct(graduations);
   const positions = graduations.map((graduation) => graduation.positionUm);
-  const x = fitLine(positions, graduations.map((graduation) => graduation.at.x));
-  const y = fitLine(positions, graduations.map((graduation) => graduation.at.y));
+  const x = fitLine(
+    positions,
+    graduations.map((graduation) => graduation.at.x),
+  );
+  const y = fitLine(
+    positions,
+    graduations.map((graduation) => graduation.at.y),
+  );
   const pxPerUm = Math.hypot(x.slope, y.slope);
   const spanUm = Math.max(...positions) - Math.min(...positions);
   const spanPx = pxPerUm * spanUm;
@@ -142,7 +148,10 @@ function requireDistinct(graduations: readonly Graduation[]): void {
       count: graduations.length,
     });
   }
-  requireFinite(graduations.flatMap(({ at, positionUm }) => [at.x, at.y, positionUm]), 'graduations');
+  requireFinite(
+    graduations.flatMap(({ at, positionUm }) => [at.x, at.y, positionUm]),
+    'graduations',
+  );
   // Sorted by position only neighbours can share one; places along a ruling are then sorted as well.
   const sorted = [...graduations].sort((a, b) => a.positionUm - b.positionUm);
   sorted.slice(1).forEach((next, i) => {
@@ -159,11 +168,10 @@ function requireDistinct(graduations: readonly Graduation[]): void {
 
 /** The error of every reference that is too short to say much. */
 export function referenceTooShort(spanPx: number): DomainError {
-  return new DomainError(
-    'reference-too-short',
-    `Spans ${spanPx.toFixed(1)} px; needs ${SHORTEST_REFERENCE_PX}.`,
-    { spanPx: Number(spanPx.toFixed(1)), neededPx: SHORTEST_REFERENCE_PX },
-  );
+  return new DomainError('reference-too-short', `Spans ${spanPx.toFixed(1)} px; needs ${SHORTEST_REFERENCE_PX}.`, {
+    spanPx: Number(spanPx.toFixed(1)),
+    neededPx: SHORTEST_REFERENCE_PX,
+  });
 }
 
 export { graduationsFromIndexedMarks, graduationsFromMarks } from './graduations.js';

@@ -13,7 +13,10 @@ import type { Graduation } from './calibration.js';
  */
 export function graduationsFromMarks(marks: readonly ImagePoint[], spacingUm: number): Graduation[] {
   requirePositive(spacingUm, 'spacingUm');
-  requireFinite(marks.flatMap((mark) => [mark.x, mark.y]), 'marks');
+  requireFinite(
+    marks.flatMap((mark) => [mark.x, mark.y]),
+    'marks',
+  );
   const oneEnd = farthestFrom(marks, marks[0]);
   const otherEnd = farthestFrom(marks, oneEnd);
   if (!oneEnd || !otherEnd || marks.length < 2) {
@@ -22,9 +25,7 @@ export function graduationsFromMarks(marks: readonly ImagePoint[], spacingUm: nu
   const oneIsFirst = oneEnd.x - otherEnd.x || oneEnd.y - otherEnd.y;
   const [first, last] = oneIsFirst < 0 ? [oneEnd, otherEnd] : [otherEnd, oneEnd];
   const along = (mark: ImagePoint) => (mark.x - first.x) * (last.x - first.x) + (mark.y - first.y) * (last.y - first.y);
-  return [...marks]
-    .sort((a, b) => along(a) - along(b))
-    .map((at, index) => ({ at, positionUm: index * spacingUm }));
+  return [...marks].sort((a, b) => along(a) - along(b)).map((at, index) => ({ at, positionUm: index * spacingUm }));
 }
 
 /**

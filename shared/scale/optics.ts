@@ -86,7 +86,10 @@ const NEAR_POINT_MM = 250;
  * @throws {DomainError} `not-positive`; `not-a-lens`
  * @example ballLens(1, 1.5168) // f 0.734 mm, 0.234 mm before the surface, 341×
  */
-export function ballLens(diameterMm: number, index: number): { focalMm: number; backFocalMm: number; magnification: number } {
+export function ballLens(
+  diameterMm: number,
+  index: number,
+): { focalMm: number; backFocalMm: number; magnification: number } {
   positive({ diameterMm, index });
   if (!(index > 1)) throw new DomainError('not-a-lens', 'Glass has an index over 1.');
   const focalMm = (index * diameterMm) / (4 * (index - 1));

@@ -77,7 +77,8 @@ export function referenceSpan(a: ImagePoint, b: ImagePoint): number {
  */
 export function heightOffsetError(nearerMm: number, distanceMm: number): number {
   requirePositive(distanceMm, 'distanceMm');
-  if (!(nearerMm < distanceMm)) throw new DomainError('reference-behind-lens', 'The reference must lie before the lens.');
+  if (!(nearerMm < distanceMm))
+    throw new DomainError('reference-behind-lens', 'The reference must lie before the lens.');
   return -nearerMm / distanceMm;
 }
 

@@ -55,7 +55,10 @@ export function resolution(step: number): number {
 export function welchSatterthwaite(
   parts: readonly { readonly u: number; readonly degreesOfFreedom: number | null }[],
 ): number {
-  requireFinite(parts.map((part) => part.u), 'parts');
+  requireFinite(
+    parts.map((part) => part.u),
+    'parts',
+  );
   const limited = parts.reduce((total, part) => total + part.u ** 4 / (part.degreesOfFreedom ?? Infinity), 0);
   return limited === 0 ? Infinity : combine(...parts.map((part) => part.u)) ** 4 / limited;
 }

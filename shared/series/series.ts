@@ -68,7 +68,8 @@ export function summariseSeries(
 
   const common = quantity === 'q' ? NO_SCALE_ERROR : { relativeUncertainty: relativeScale, limitFraction };
   const scale = splitScale(common, summary.mean);
-  const scatter = summary.sd === null ? singlePointing(bodies, quantity, relativeScale) : summary.sd / Math.sqrt(summary.n);
+  const scatter =
+    summary.sd === null ? singlePointing(bodies, quantity, relativeScale) : summary.sd / Math.sqrt(summary.n);
   const edge = quantity === 'q' ? edgeOfQ(bodies, summary.mean, edgeUm) : edgeUm;
   const parts = { scatter, scale: common.relativeUncertainty * summary.mean, edge };
   const u = combine(parts.scatter, parts.scale, parts.edge);
@@ -128,6 +129,11 @@ function singlePointing(bodies: readonly BodyMeasure[], quantity: SeriesQuantity
 
 /** u(Q) of edges that are off by `edgeUm` along and across, for the mean body. */
 function edgeOfQ(bodies: readonly BodyMeasure[], q: number, edgeUm: number): number {
-  const width = summarise(valuesOf(bodies.filter((body) => body.q !== null), 'width'));
+  const width = summarise(
+    valuesOf(
+      bodies.filter((body) => body.q !== null),
+      'width',
+    ),
+  );
   return width && width.mean > 0 ? (edgeUm * Math.hypot(1, q)) / width.mean : 0;
 }

@@ -27,8 +27,7 @@ export function normalQuantile(p: number): number {
   const tail = Math.min(p, 1 - p);
   const t = Math.sqrt(-2 * Math.log(tail));
   let z =
-    t -
-    (2.515517 + 0.802853 * t + 0.010328 * t * t) / (1 + 1.432788 * t + 0.189269 * t * t + 0.001308 * t * t * t);
+    t - (2.515517 + 0.802853 * t + 0.010328 * t * t) / (1 + 1.432788 * t + 0.189269 * t * t + 0.001308 * t * t * t);
   for (let step = 0; step < 4; step++) z += (normalTail(z) - tail) / normalDensity(z);
   return p < 0.5 ? -z : z;
 }
@@ -80,9 +79,7 @@ function incompleteBeta(x: number, a: number, b: number): number {
   if (x >= 1) return 1;
   // the fraction converges fast only below this bound; the symmetry serves the rest
   if (x > (a + 1) / (a + b + 2)) return 1 - incompleteBeta(1 - x, b, a);
-  const front = Math.exp(
-    logGamma(a + b) - logGamma(a) - logGamma(b) + a * Math.log(x) + b * Math.log1p(-x),
-  );
+  const front = Math.exp(logGamma(a + b) - logGamma(a) - logGamma(b) + a * Math.log(x) + b * Math.log1p(-x));
   const notZero = (value: number) => (Math.abs(value) < 1e-300 ? 1e-300 : value);
   let c = 1;
   let d = 1 / notZero(1 - ((a + b) * x) / (a + 1));
@@ -110,8 +107,7 @@ function logGamma(x: number): number {
     at += 1;
   }
   const inverse = 1 / (at * at);
-  const series =
-    (1 / 12 - inverse * (1 / 360 - inverse * (1 / 1260 - inverse * (1 / 1680 - inverse / 1188)))) / at;
+  const series = (1 / 12 - inverse * (1 / 360 - inverse * (1 / 1260 - inverse * (1 / 1680 - inverse / 1188)))) / at;
   return (at - 0.5) * Math.log(at) - at + 0.5 * Math.log(2 * Math.PI) + series - shift;
 }
 

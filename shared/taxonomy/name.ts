@@ -28,9 +28,21 @@ const ABOVE_GENUS: ReadonlySet<string> = new Set(
 );
 
 /** Words inside a name that are not names: ranks and the sign of a hybrid. */
-const CONNECTORS: ReadonlySet<string> = new Set(
-  ['subsp.', 'ssp.', 'var.', 'subvar.', 'f.', 'subf.', 'f.sp.', 'subg.', 'subgen.', 'sect.', 'subsect.', 'ser.', '×'],
-);
+const CONNECTORS: ReadonlySet<string> = new Set([
+  'subsp.',
+  'ssp.',
+  'var.',
+  'subvar.',
+  'f.',
+  'subf.',
+  'f.sp.',
+  'subg.',
+  'subgen.',
+  'sect.',
+  'subsect.',
+  'ser.',
+  '×',
+]);
 
 /**
  * A scientific name in pieces of one typeface, to be set one after the other; spaces are in the pieces.
@@ -87,6 +99,8 @@ function joined(parts: readonly NamePart[]): NamePart[] {
     if (!last) return [part];
     if (last.italic === part.italic) return [...done.slice(0, -1), { ...last, text: `${last.text} ${part.text}` }];
     // the space goes to the roman side, where it isn't slanted
-    return last.italic ? [...done, { ...part, text: ` ${part.text}` }] : [...done.slice(0, -1), { ...last, text: `${last.text} ` }, part];
+    return last.italic
+      ? [...done, { ...part, text: ` ${part.text}` }]
+      : [...done.slice(0, -1), { ...last, text: `${last.text} ` }, part];
   }, []);
 }

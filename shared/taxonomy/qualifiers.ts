@@ -17,7 +17,11 @@ export interface Qualifier {
 }
 
 export const QUALIFIERS: readonly Qualifier[] = [
-  { term: 'cf.', place: 'before-epithet', meaning: 'looks like it; a needed character was not, or could not be, checked' },
+  {
+    term: 'cf.',
+    place: 'before-epithet',
+    meaning: 'looks like it; a needed character was not, or could not be, checked',
+  },
   { term: 'aff.', place: 'before-epithet', meaning: 'near it but held to be distinct, often undescribed' },
   { term: 'nr.', place: 'before-epithet', meaning: 'near it; better said with aff.' },
   { term: 'gr.', place: 'before-epithet', meaning: 'one of its species group' },

@@ -12,7 +12,11 @@ import { DomainError } from '../errors.js';
  * @throws {DomainError} `not-finite`
  * @example roundDecimal(1234.5, 0) // '1235'
  */
-export function roundDecimal(value: number, decimals: number, towards: 'nearest' | 'floor' | 'ceil' = 'nearest'): string {
+export function roundDecimal(
+  value: number,
+  decimals: number,
+  towards: 'nearest' | 'floor' | 'ceil' = 'nearest',
+): string {
   if (!Number.isFinite(value)) throw new DomainError('not-finite', `Can't write ${value}.`);
   const [mantissa, exponent] = Math.abs(value).toExponential().split('e') as [string, string];
   const digits = mantissa.replace('.', '');

@@ -78,7 +78,10 @@ describe('coverage of the stated 95 % intervals', () => {
     ['eleven marks of a perfect slide', { ...WHOLE, toleranceUm: 0 }],
     ['five marks, three degrees of freedom', { graduations: 5, spacingUm: 25, toleranceUm: 0, errs: true }],
     ['two marks', { graduations: 2, spacingUm: 1000, toleranceUm: 0, errs: true }],
-    ['a short ruling, where the tolerance is nearly all', { graduations: 11, spacingUm: 10, toleranceUm: TOLERANCE_UM, errs: true }],
+    [
+      'a short ruling, where the tolerance is nearly all',
+      { graduations: 11, spacingUm: 10, toleranceUm: TOLERANCE_UM, errs: true },
+    ],
   ])('of a calibration from %s', (_, setup) => {
     expectHonest(
       share((random) => {

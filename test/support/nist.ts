@@ -5,7 +5,9 @@ function read(name: string): { text: string; rows: number[][] } {
   const text = readFileSync(new URL(`../fixtures/nist/${name}.dat`, import.meta.url), 'utf8');
   const lines = text.split(/\r?\n/);
   // the data are the last block of lines that hold nothing but numbers
-  const lastProse = lines.findLastIndex((line) => line.trim() !== '' && !/^[\s\d.eE+-]+$/.test(line) || /^-+$/.test(line.trim()));
+  const lastProse = lines.findLastIndex(
+    (line) => (line.trim() !== '' && !/^[\s\d.eE+-]+$/.test(line)) || /^-+$/.test(line.trim()),
+  );
   const rows = lines
     .slice(lastProse + 1)
     .filter((line) => line.trim() !== '')

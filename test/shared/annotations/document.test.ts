@@ -1,20 +1,37 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { NoteDocument } from '../../../shared/annotations/document.js';
-import { applyEdit, applyEdits, EMPTY_DOCUMENT, inverse, rebase, sameNote } from '../../../shared/annotations/document.js';
+import {
+  applyEdit,
+  applyEdits,
+  EMPTY_DOCUMENT,
+  inverse,
+  rebase,
+  sameNote,
+} from '../../../shared/annotations/document.js';
 import type { Note, NoteEdit } from '../../../shared/annotations/note.js';
 import { px } from '../../../shared/geometry/points.js';
 import { codeOf } from '../../support/close.js';
 
 function note(id: string, text: string, x = 10): Note {
   return {
-    id, imageId: 'image', layer: 'ada', kind: 'point', seriesId: null, text,
+    id,
+    imageId: 'image',
+    layer: 'ada',
+    kind: 'point',
+    seriesId: null,
+    text,
     geometry: { type: 'pointer', at: px(x, 20), label: px(x + 50, 60) },
   };
 }
 
 let made = 0;
-const edit = (noteId: string, before: Note | null, after: Note | null): NoteEdit => ({ id: `edit-${made++}`, noteId, before, after });
+const edit = (noteId: string, before: Note | null, after: Note | null): NoteEdit => ({
+  id: `edit-${made++}`,
+  noteId,
+  before,
+  after,
+});
 const docOf = (...notes: Note[]): NoteDocument => new Map(notes.map((one) => [one.id, one]));
 const entries = (doc: NoteDocument) => Object.fromEntries([...doc].sort(([a], [b]) => a.localeCompare(b)));
 
@@ -88,7 +105,10 @@ describe('two writers on one note', () => {
 describe('sameness of notes', () => {
   it('goes by what they hold, not by the order or the absence of fields', () => {
     const one = note('a', 'x');
-    const other = { ...one, geometry: { label: px(60, 60), at: { y: 20, x: 10, space: undefined }, type: 'pointer' } } as Note;
+    const other = {
+      ...one,
+      geometry: { label: px(60, 60), at: { y: 20, x: 10, space: undefined }, type: 'pointer' },
+    } as Note;
     expect(sameNote(one, other)).toBe(true);
     expect(sameNote(one, note('a', 'x', 11))).toBe(false);
     expect(sameNote(one, null)).toBe(false);
@@ -125,7 +145,10 @@ describe('any edits', () => {
           expect(entries(applyEdit(after.doc, inverse(one, 'undo')).doc)).toEqual(entries(doc));
           doc = after.doc;
         }
-        const undone = applyEdits(doc, [...edits].reverse().map((one) => inverse(one, `undo ${one.id}`)));
+        const undone = applyEdits(
+          doc,
+          [...edits].reverse().map((one) => inverse(one, `undo ${one.id}`)),
+        );
         expect(undone.size).toBe(0);
       }),
     );

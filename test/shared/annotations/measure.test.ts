@@ -32,7 +32,10 @@ describe('measuring a body', () => {
 
   it('gives both dimensions of a cross and their ratio', () => {
     const body = measureNote(CROSS, 'along-then-across', SCALE);
-    expect(body.dimensions.map(({ dimension, px: size }) => [dimension, size])).toEqual([['length', 42], ['width', 30]]);
+    expect(body.dimensions.map(({ dimension, px: size }) => [dimension, size])).toEqual([
+      ['length', 42],
+      ['width', 30],
+    ]);
     expectClose(body.dimensions[0]?.um, 8.4, 1e-12);
     expectClose(body.q, 1.4, 1e-12);
   });
@@ -72,7 +75,9 @@ describe('measuring a body', () => {
 
   it('follows a bend', () => {
     const stalk: NoteGeometry = { type: 'path', points: [px(0, 0), px(30, 40), px(30, 100)] };
-    expect(measureNote(stalk, 'along-bend', SCALE).dimensions).toMatchObject([{ dimension: 'length', px: 110, um: 22 }]);
+    expect(measureNote(stalk, 'along-bend', SCALE).dimensions).toMatchObject([
+      { dimension: 'length', px: 110, um: 22 },
+    ]);
     expect(measureNote(LINE, 'along-bend', SCALE).dimensions).toMatchObject([{ dimension: 'length', px: 500 }]);
   });
 
@@ -85,6 +90,8 @@ describe('measuring a body', () => {
     const pointer: NoteGeometry = { type: 'pointer', at: px(1, 1), label: px(9, 9) };
     expect(codeOf(() => measureNote(pointer, 'along', SCALE))).toBe('wrong-shape');
     expect(codeOf(() => measureNote(CROSS, 'across', SCALE))).toBe('wrong-shape');
-    expect(codeOf(() => measureNote({ type: 'path', points: [px(0, 0), px(9, 9)] }, 'across', SCALE))).toBe('wrong-shape');
+    expect(codeOf(() => measureNote({ type: 'path', points: [px(0, 0), px(9, 9)] }, 'across', SCALE))).toBe(
+      'wrong-shape',
+    );
   });
 });

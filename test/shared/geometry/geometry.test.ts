@@ -9,7 +9,8 @@ import { polygonArea, polygonCentroid, polygonPerimeter } from '../../../shared/
 import { distanceToSegment, segmentDirection, segmentLength } from '../../../shared/geometry/segment.js';
 import { codeOf, expectClose } from '../../support/close.js';
 
-const coordinate = fc.double({ min: -5000, max: 5000, noNaN: true });
+/** Thousandths of a pixel: no tinier numbers than pictures have. */
+const coordinate = fc.integer({ min: -5_000_000, max: 5_000_000 }).map((thousandths) => thousandths / 1000);
 const point = fc.tuple(coordinate, coordinate).map(([x, y]) => px(x, y));
 const points = (fewest: number) => fc.array(point, { minLength: fewest, maxLength: 12 });
 const turn = (p: ImagePoint, angle: number) =>
@@ -76,14 +77,21 @@ describe('polygon', () => {
 
   it('keeps its area when turned, reversed or moved, and takes k² when enlarged', () => {
     fc.assert(
-      fc.property(points(3), fc.double({ min: -3, max: 3, noNaN: true }), fc.double({ min: 0.1, max: 9, noNaN: true }), (shape, angle, k) => {
-        const area = polygonArea(shape);
-        const slack = 1e-6 * (1 + area); // 10⁸ px² of cancelling products
-        expect(Math.abs(polygonArea(shape.map((p) => turn(p, angle))) - area)).toBeLessThan(slack);
-        expect(Math.abs(polygonArea([...shape].reverse()) - area)).toBeLessThan(slack);
-        expect(Math.abs(polygonArea(shape.map((p) => px(p.x + 300, p.y - 70))) - area)).toBeLessThan(slack);
-        expect(Math.abs(polygonArea(shape.map((p) => px(k * p.x, k * p.y))) - k * k * area)).toBeLessThan(slack * k * k);
-      }),
+      fc.property(
+        points(3),
+        fc.double({ min: -3, max: 3, noNaN: true }),
+        fc.double({ min: 0.1, max: 9, noNaN: true }),
+        (shape, angle, k) => {
+          const area = polygonArea(shape);
+          const slack = 1e-6 * (1 + area); // 10⁸ px² of cancelling products
+          expect(Math.abs(polygonArea(shape.map((p) => turn(p, angle))) - area)).toBeLessThan(slack);
+          expect(Math.abs(polygonArea([...shape].reverse()) - area)).toBeLessThan(slack);
+          expect(Math.abs(polygonArea(shape.map((p) => px(p.x + 300, p.y - 70))) - area)).toBeLessThan(slack);
+          expect(Math.abs(polygonArea(shape.map((p) => px(k * p.x, k * p.y))) - k * k * area)).toBeLessThan(
+            slack * k * k,
+          );
+        },
+      ),
     );
   });
 
@@ -104,7 +112,10 @@ describe('orientation', () => {
   };
 
   it.each([
-    [1, [100, 50]], [6, [3949, 100]], [3, [5899, 3949]], [8, [50, 5899]],
+    [1, [100, 50]],
+    [6, [3949, 100]],
+    [3, [5899, 3949]],
+    [8, [50, 5899]],
   ] as const)('%d takes pixel (100, 50) of 6000 × 4000 to %j', (orientation, expected) => {
     expect(pixel(100, 50, orientation)).toEqual(expected); // Exif 3.0, tag Orientation; worked by hand
   });
@@ -115,7 +126,10 @@ describe('orientation', () => {
   });
 
   it('keeps every point within the picture and every distance as it was', () => {
-    const inside = fc.tuple(fc.double({ min: 0, max: 6000, noNaN: true }), fc.double({ min: 0, max: 4000, noNaN: true }));
+    const inside = fc.tuple(
+      fc.double({ min: 0, max: 6000, noNaN: true }),
+      fc.double({ min: 0, max: 4000, noNaN: true }),
+    );
     fc.assert(
       fc.property(inside, inside, fc.constantFrom<Orientation>(1, 2, 3, 4, 5, 6, 7, 8), (a, b, orientation) => {
         const [ua, ub] = [toUpright(px(...a), size, orientation), toUpright(px(...b), size, orientation)];
@@ -124,10 +138,13 @@ describe('orientation', () => {
         expect(ua.x).toBeLessThanOrEqual(upright.width);
         expect(ua.y).toBeGreaterThanOrEqual(0);
         expect(ua.y).toBeLessThanOrEqual(upright.height);
-        expect(Math.abs(Math.hypot(ub.x - ua.x, ub.y - ua.y) - Math.hypot(b[0] - a[0], b[1] - a[1]))).toBeLessThan(1e-6);
+        expect(Math.abs(Math.hypot(ub.x - ua.x, ub.y - ua.y) - Math.hypot(b[0] - a[0], b[1] - a[1]))).toBeLessThan(
+          1e-6,
+        );
       }),
     );
   });
 
-  it('refuses a ninth', () => expect(codeOf(() => toUpright(px(1, 1), size, 9 as Orientation))).toBe('not-an-orientation'));
+  it('refuses a ninth', () =>
+    expect(codeOf(() => toUpright(px(1, 1), size, 9 as Orientation))).toBe('not-an-orientation'));
 });

@@ -19,7 +19,10 @@ const ELEVEN: Graduation[] = READINGS.map((x, i) => ({ at: px(x, 640), positionU
 function turned(graduations: readonly Graduation[], angle: number, about = px(300, 200)): Graduation[] {
   const [c, s] = [Math.cos(angle), Math.sin(angle)];
   return graduations.map(({ at, positionUm }) => ({
-    at: px(about.x + c * (at.x - about.x) - s * (at.y - about.y), about.y + s * (at.x - about.x) + c * (at.y - about.y)),
+    at: px(
+      about.x + c * (at.x - about.x) - s * (at.y - about.y),
+      about.y + s * (at.x - about.x) + c * (at.y - about.y),
+    ),
     positionUm,
   }));
 }
@@ -107,16 +110,30 @@ describe('calibration of many graduations', () => {
   });
 
   it('does not mind the order of the marks or where zero is', () => {
-    const shuffled = [...ELEVEN.slice(4), ...ELEVEN.slice(0, 4)].map(({ at, positionUm }) => ({ at, positionUm: positionUm - 700 }));
+    const shuffled = [...ELEVEN.slice(4), ...ELEVEN.slice(0, 4)].map(({ at, positionUm }) => ({
+      at,
+      positionUm: positionUm - 700,
+    }));
     expectClose(fitCalibration({ graduations: shuffled, toleranceUm: 0 }).umPerPx, 0.2150045835068, 1e-11);
   });
 
   it('refuses what says too little', () => {
-    const fit = (graduations: Graduation[], toleranceUm = 1.5) => codeOf(() => fitCalibration({ graduations, toleranceUm }));
+    const fit = (graduations: Graduation[], toleranceUm = 1.5) =>
+      codeOf(() => fitCalibration({ graduations, toleranceUm }));
     expect(fit([])).toBe('too-few-graduations');
     expect(fit([ELEVEN[0]!])).toBe('too-few-graduations');
-    expect(fit([{ at: px(0, 0), positionUm: 0 }, { at: px(9.9, 0), positionUm: 10 }])).toBe('reference-too-short');
-    expect(fit([{ at: px(0, 0), positionUm: 0 }, { at: px(90, 0), positionUm: 0 }])).toBe('coincident-graduations');
+    expect(
+      fit([
+        { at: px(0, 0), positionUm: 0 },
+        { at: px(9.9, 0), positionUm: 10 },
+      ]),
+    ).toBe('reference-too-short');
+    expect(
+      fit([
+        { at: px(0, 0), positionUm: 0 },
+        { at: px(90, 0), positionUm: 0 },
+      ]),
+    ).toBe('coincident-graduations');
     expect(fit([...ELEVEN, { at: px(102.9, 640), positionUm: 1 }])).toBe('coincident-graduations');
     expect(fit([{ at: px(NaN, 0), positionUm: 0 }, ELEVEN[5]!])).toBe('not-finite');
     expect(fit(ELEVEN, -1)).toBe('not-positive');
@@ -124,9 +141,15 @@ describe('calibration of many graduations', () => {
   });
 
   it('tells how much was spanned and how much is needed', () => {
-    expect(() => fitCalibration({ graduations: [{ at: px(0, 0), positionUm: 0 }, { at: px(3, 0), positionUm: 10 }], toleranceUm: 0 })).toThrow(
-      'Spans 3.0 px; needs 10.',
-    );
+    expect(() =>
+      fitCalibration({
+        graduations: [
+          { at: px(0, 0), positionUm: 0 },
+          { at: px(3, 0), positionUm: 10 },
+        ],
+        toleranceUm: 0,
+      }),
+    ).toThrow('Spans 3.0 px; needs 10.');
   });
 });
 
@@ -143,7 +166,11 @@ describe('marks to graduations', () => {
   });
 
   it('lets marks that know their number leave some out', () => {
-    const marks = [{ at: px(5, 0), index: 0 }, { at: px(205, 0), index: 4 }, { at: px(255, 0), index: 5 }];
+    const marks = [
+      { at: px(5, 0), index: 0 },
+      { at: px(205, 0), index: 4 },
+      { at: px(255, 0), index: 5 },
+    ];
     const fit = fitCalibration({ graduations: graduationsFromIndexedMarks(marks, 10), toleranceUm: 0 });
     expectClose(fit.umPerPx, 0.2, 1e-12);
     expect(fit.spanUm).toBe(50);

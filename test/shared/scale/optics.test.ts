@@ -1,15 +1,33 @@
 import { describe, expect, it } from 'vitest';
 import {
-  abbe, airy, ballLens, depthOfField, effectiveF, fieldOfView, nyquistPixel, nyquistPixelOnSensor, opticsScale,
-  pitchFromFilmEquivalent, pitchFromFocalPlane, pixelAtSpecimen, rayleigh, thinLens, undersampled,
-  usefulMagnification, waveDepthOfField,
+  abbe,
+  airy,
+  ballLens,
+  depthOfField,
+  effectiveF,
+  fieldOfView,
+  nyquistPixel,
+  nyquistPixelOnSensor,
+  opticsScale,
+  pitchFromFilmEquivalent,
+  pitchFromFocalPlane,
+  pixelAtSpecimen,
+  rayleigh,
+  thinLens,
+  undersampled,
+  usefulMagnification,
+  waveDepthOfField,
 } from '../../../shared/scale/optics.js';
 import { cropFactor, pitchAfterDigitalZoom, sensorWidthMm } from '../../../shared/scale/optics-scale.js';
 import { codeOf, expectClose } from '../../support/close.js';
 
 describe('what an objective resolves', () => {
   it.each([
-    [0.13, 2.42, 1.05], [0.45, 0.7, 0.3], [0.75, 0.42, 0.18], [1.3, 0.24, 0.11], [1.4, 0.22, 0.1],
+    [0.13, 2.42, 1.05],
+    [0.45, 0.7, 0.3],
+    [0.75, 0.42, 0.18],
+    [1.3, 0.24, 0.11],
+    [1.4, 0.22, 0.1],
   ])('at NA %d and 515 nm is %d µm, kept by pixels of %d µm', (na, resolved, pixel) => {
     // University of Arizona, after Inoué 1986, Video Microscopy, p. 114
     expect(Math.abs(rayleigh(na, 515) - resolved)).toBeLessThanOrEqual(0.005);
@@ -17,9 +35,13 @@ describe('what an objective resolves', () => {
   });
 
   it.each([
-    [4, 0.1, 3.355, 2.75, 1.459, 5.83], [10, 0.25, 1.342, 1.1, 0.583, 5.83], [20, 0.4, 0.839, 0.688, 0.365, 7.29],
-    [40, 0.65, 0.516, 0.423, 0.224, 8.98], [60, 0.85, 0.395, 0.324, 0.172, 10.3],
-    [100, 1.25, 0.268, 0.22, 0.117, 11.67], [100, 1.4, 0.24, 0.196, 0.104, 10.42],
+    [4, 0.1, 3.355, 2.75, 1.459, 5.83],
+    [10, 0.25, 1.342, 1.1, 0.583, 5.83],
+    [20, 0.4, 0.839, 0.688, 0.365, 7.29],
+    [40, 0.65, 0.516, 0.423, 0.224, 8.98],
+    [60, 0.85, 0.395, 0.324, 0.172, 10.3],
+    [100, 1.25, 0.268, 0.22, 0.117, 11.67],
+    [100, 1.4, 0.24, 0.196, 0.104, 10.42],
   ])('of %d×/%d in green', (power, na, byRayleigh, byAbbe, pixel, onSensor) => {
     // 0.61·λ/NA, λ/(2·NA), R/2.3; worked with λ = 550 nm
     expect(Math.abs(rayleigh(na) - byRayleigh)).toBeLessThanOrEqual(0.00051);
@@ -43,14 +65,26 @@ describe('what an objective resolves', () => {
 
 describe('depth of field', () => {
   it.each([
-    [0.1, 55], [0.14, 28.1], [0.2, 13.8], [0.25, 8.8], [0.28, 7.02], [0.4, 3.44], [0.5, 2.2], [0.65, 1.3], [0.75, 0.98],
+    [0.1, 55],
+    [0.14, 28.1],
+    [0.2, 13.8],
+    [0.25, 8.8],
+    [0.28, 7.02],
+    [0.4, 3.44],
+    [0.5, 2.2],
+    [0.65, 1.3],
+    [0.75, 0.98],
   ])('by waves at NA %d is %d µm', (na, depth) => {
     // λ·n/NA² at 550 nm in air: common practice, no source
     expect(Math.abs(waveDepthOfField(na) - depth)).toBeLessThanOrEqual(0.0501);
   });
 
   it.each([
-    [4, 0.1, 1, 71.25], [10, 0.25, 1, 11.4], [20, 0.4, 1, 4.25], [40, 0.65, 1, 1.552], [100, 1.25, 1.515, 0.612],
+    [4, 0.1, 1, 71.25],
+    [10, 0.25, 1, 11.4],
+    [20, 0.4, 1, 4.25],
+    [40, 0.65, 1, 1.552],
+    [100, 1.25, 1.515, 0.612],
   ])('with the camera of 6.5 µm pixels at %d×/%d in index %d is %d µm', (magnification, na, index, depth) => {
     expectClose(depthOfField({ na, magnification, index, pixelUm: 6.5 }), depth, 1e-3);
   });
@@ -58,8 +92,13 @@ describe('depth of field', () => {
 
 describe('simple lenses', () => {
   it.each([
-    [1.47, 5, 3.9096], [1.5, 10, 7.5], [1.5168, 1, 0.7337], [1.5168, 2.4, 1.761], [1.5168, 3, 2.2012],
-    [1.77, 1, 0.5747], [1.458, 0.5, 0.3979],
+    [1.47, 5, 3.9096],
+    [1.5, 10, 7.5],
+    [1.5168, 1, 0.7337],
+    [1.5168, 2.4, 1.761],
+    [1.5168, 3, 2.2012],
+    [1.77, 1, 0.5747],
+    [1.458, 0.5, 0.3979],
   ])('a ball of index %d and %d mm has a focal length of %d mm', (index, diameter, focal) => {
     // f = nD/(4(n − 1)), paraxial; worked by hand
     expectClose(ballLens(diameter, index).focalMm, focal, 2e-4);
@@ -73,7 +112,10 @@ describe('simple lenses', () => {
   });
 
   it.each([
-    [100, 300, 0.5, 150], [100, 200, 1, 200], [60, 180, 0.5, 90], [50, 1000, 0.0526316, 52.6316],
+    [100, 300, 0.5, 150],
+    [100, 200, 1, 200],
+    [60, 180, 0.5, 90],
+    [50, 1000, 0.0526316, 52.6316],
   ])('a thin one of %d mm at %d mm magnifies %d times', (focal, distance, magnification, image) => {
     expectClose(thinLens(focal, distance).magnification, magnification, 1e-6);
     expectClose(thinLens(focal, distance).imageMm, image, 1e-6);
@@ -96,10 +138,15 @@ describe('simple lenses', () => {
 
 describe('scale by calculation', () => {
   it.each([
-    [6.45, 1, 100, 1, 0.0645], [3.45, 1, 40, 0.5, 0.1725], [3.45, 2, 40, 0.5, 0.345],
-  ])('pixels of %d µm, binned %d, at %d× and relay %d cover %d µm', (pixelPitchUm, binning, magnification, relay, covered) => {
-    expectClose(pixelAtSpecimen({ pixelPitchUm, binning, magnification, relay }), covered, 1e-12);
-  });
+    [6.45, 1, 100, 1, 0.0645],
+    [3.45, 1, 40, 0.5, 0.1725],
+    [3.45, 2, 40, 0.5, 0.345],
+  ])(
+    'pixels of %d µm, binned %d, at %d× and relay %d cover %d µm',
+    (pixelPitchUm, binning, magnification, relay, covered) => {
+      expectClose(pixelAtSpecimen({ pixelPitchUm, binning, magnification, relay }), covered, 1e-12);
+    },
+  );
 
   it('puts 77.519 pixels into 5 µm', () => {
     expectClose(5 / pixelAtSpecimen({ pixelPitchUm: 6.45, binning: 1, magnification: 100, relay: 1 }), 77.519, 1e-5);

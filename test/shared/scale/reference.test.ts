@@ -3,7 +3,13 @@ import { px } from '../../../shared/geometry/points.js';
 import { fingerScale, UNKNOWN_FINGER } from '../../../shared/scale/finger.js';
 import { KNOWN_OBJECTS, knownObject, rulerLimitMm } from '../../../shared/scale/known-objects.js';
 import { heightOffsetError, referenceScale, tiltError } from '../../../shared/scale/reference.js';
-import { pointInCrop, pointInRendition, scaleAfterCrop, scaleAfterResize, scaleOfRegion } from '../../../shared/scale/resize.js';
+import {
+  pointInCrop,
+  pointInRendition,
+  scaleAfterCrop,
+  scaleAfterResize,
+  scaleOfRegion,
+} from '../../../shared/scale/resize.js';
 import type { Scale } from '../../../shared/scale/scale.js';
 import { codeOf, expectClose } from '../../support/close.js';
 
@@ -17,7 +23,11 @@ describe('reference in the frame', () => {
 
   it('is as sure as its two ends, its tolerance, its height and its tilt', () => {
     expectClose(referenceScale(tenMillimetres).relativeUncertainty, (Math.SQRT2 * 0.5) / 500, 1e-12);
-    expectClose(referenceScale({ ...tenMillimetres, pointingPx: 0, toleranceUm: 500 }).relativeUncertainty, 0.05 / Math.sqrt(3), 1e-12);
+    expectClose(
+      referenceScale({ ...tenMillimetres, pointingPx: 0, toleranceUm: 500 }).relativeUncertainty,
+      0.05 / Math.sqrt(3),
+      1e-12,
+    );
     const high = referenceScale({ ...tenMillimetres, pointingPx: 0, heightMm: 10, distanceMm: 300 });
     expectClose(high.relativeUncertainty, 1 / 30 / Math.sqrt(3), 1e-12);
     const tilted = referenceScale({ ...tenMillimetres, pointingPx: 0, tiltDegrees: 10 });
@@ -34,7 +44,11 @@ describe('reference in the frame', () => {
   });
 
   it.each([
-    [5, -0.38], [10, -1.52], [15, -3.41], [20, -6.03], [30, -13.4],
+    [5, -0.38],
+    [10, -1.52],
+    [15, -3.41],
+    [20, -6.03],
+    [30, -13.4],
   ])('leaning by %d° makes %d %%', (degrees, percent) => {
     expect((100 * tiltError(degrees)).toFixed(2)).toBe(percent.toFixed(2)); // cos θ − 1
   });
@@ -59,10 +73,20 @@ describe('known objects', () => {
   });
 
   it.each([
-    ['euro-0.01', 16.25], ['euro-0.02', 18.75], ['euro-0.05', 21.25], ['euro-0.10', 19.75], ['euro-0.20', 22.25],
-    ['euro-0.50', 24.25], ['euro-1', 23.25], ['euro-2', 25.75], // Council Regulation (EC) 975/98
-    ['us-cent', 19.05], ['us-nickel', 21.21], ['us-dime', 17.91], ['us-quarter', 24.26], // United States Mint
-    ['card-long', 85.6], ['card-short', 53.98], // ISO/IEC 7810
+    ['euro-0.01', 16.25],
+    ['euro-0.02', 18.75],
+    ['euro-0.05', 21.25],
+    ['euro-0.10', 19.75],
+    ['euro-0.20', 22.25],
+    ['euro-0.50', 24.25],
+    ['euro-1', 23.25],
+    ['euro-2', 25.75], // Council Regulation (EC) 975/98
+    ['us-cent', 19.05],
+    ['us-nickel', 21.21],
+    ['us-dime', 17.91],
+    ['us-quarter', 24.26], // United States Mint
+    ['card-long', 85.6],
+    ['card-short', 53.98], // ISO/IEC 7810
   ])('%s measures %d mm', (id, lengthMm) => {
     expect(knownObject(id)?.lengthMm).toBe(lengthMm);
   });
@@ -105,7 +129,12 @@ describe('finger in the frame', () => {
 });
 
 describe('scale of a copy', () => {
-  const scale: Scale = { umPerPxX: 0.2150537634, umPerPxY: 0.2150537634, relativeUncertainty: 0.002, grounds: 'calibrated' };
+  const scale: Scale = {
+    umPerPxX: 0.2150537634,
+    umPerPxY: 0.2150537634,
+    relativeUncertainty: 0.002,
+    grounds: 'calibrated',
+  };
 
   it('follows by ratio when the whole picture was resized', () => {
     expectClose(scaleAfterResize(scale, 6000, 1500).umPerPxX, 0.8602150538, 1e-9);
@@ -126,7 +155,9 @@ describe('scale of a copy', () => {
 
   it('follows from a region and the width it was sent at', () => {
     expectClose(scaleOfRegion(scale, 1024, 512).umPerPxX, 0.4301075268, 1e-9);
-    expect(pointInRendition(px(3000, 1000), { width: 6000, height: 4000 }, { width: 1500, height: 1000 })).toEqual(px(750, 250));
+    expect(pointInRendition(px(3000, 1000), { width: 6000, height: 4000 }, { width: 1500, height: 1000 })).toEqual(
+      px(750, 250),
+    );
   });
 
   it('refuses a picture of no width', () => {

@@ -95,10 +95,20 @@ describe('a length as it is shown', () => {
 
   it('hands its parts over for laying out', () => {
     expect(quantityParts(10.1720542, 0.1519056, 'calibrated')).toEqual({
-      approx: false, value: '10.17', uncertainty: '0.30', unit: 'µm', low: '9.87', high: '10.48',
+      approx: false,
+      value: '10.17',
+      uncertainty: '0.30',
+      unit: 'µm',
+      low: '9.87',
+      high: '10.48',
     });
     expect(quantityParts(8_000, 896, 'estimated')).toEqual({
-      approx: true, value: '8', uncertainty: '2', unit: 'mm', low: '6', high: '10',
+      approx: true,
+      value: '8',
+      uncertainty: '2',
+      unit: 'mm',
+      low: '6',
+      high: '10',
     });
   });
 
@@ -116,7 +126,11 @@ describe('a length as it is shown', () => {
       fc.property(positive, fc.double({ min: 0.001, max: 0.6, noNaN: true }), (um, relative) => {
         const parts = quantityParts(um, relative * um, 'estimated');
         const factor = parts.unit === 'mm' ? 1000 : 1;
-        const [low, value, high] = [parts.low, parts.value, parts.high].map((text) => Number(text) * factor) as [number, number, number];
+        const [low, value, high] = [parts.low, parts.value, parts.high].map((text) => Number(text) * factor) as [
+          number,
+          number,
+          number,
+        ];
         expect(low).toBeLessThanOrEqual(Math.max(0, um * (1 - 2 * relative)) + 1e-9 * um);
         expect(high).toBeGreaterThanOrEqual(um * (1 + 2 * relative) * (1 - 1e-9));
         expect(low).toBeLessThanOrEqual(value + 1e-9 * um);

@@ -6,15 +6,34 @@ import { codeOf, expectClose } from '../../support/close.js';
 describe('scale bar', () => {
   // 1-2-5 series, at most a quarter of the field: common practice, no source; worked by hand
   it.each([
-    [30, 5], [86, 20], [120, 20], [216, 50], [430, 100], [550, 100], [1000, 200],
-    [1290, 200], [2400, 500], [5000, 1000], [23500, 5000],
+    [30, 5],
+    [86, 20],
+    [120, 20],
+    [216, 50],
+    [430, 100],
+    [550, 100],
+    [1000, 200],
+    [1290, 200],
+    [2400, 500],
+    [5000, 1000],
+    [23500, 5000],
   ])('of a field of %d µm is %d µm', (field, bar) => {
     expect(chooseBar(field)).toBe(bar);
   });
 
   it.each([
-    [80, 20], [4, 1], [8, 2], [0.8, 0.2], [0.4, 0.1], [4000, 1000], [20_000_000, 5_000_000],
-    [4000 * 0.02, 20], [3 * 0.1 * 4 / 3, 0.1], [79.9999, 10], [1.2e-3, 2e-4],
+    [80, 20],
+    [4, 1],
+    [8, 2],
+    [0.8, 0.2],
+    [0.4, 0.1],
+    [4000, 1000],
+    [20_000_000, 5_000_000],
+    [154 * (80 / 154), 20],
+    [161 * (200 / 161), 50],
+    [(3 * 0.1 * 4) / 3, 0.1],
+    [79.9999, 10],
+    [1.2e-3, 2e-4],
   ])('takes exactly a quarter: %d µm has %d µm', (field, bar) => {
     expect(chooseBar(field)).toBe(bar);
   });
@@ -41,7 +60,12 @@ describe('scale bar', () => {
 
   it('shows its grounds by its shape', () => {
     expect(new Set(Object.values(BAR_LOOK)).size).toBe(4);
-    expect(BAR_LOOK).toEqual({ calibrated: 'solid-with-ticks', referenced: 'open', estimated: 'dashed', none: 'words' });
+    expect(BAR_LOOK).toEqual({
+      calibrated: 'solid-with-ticks',
+      referenced: 'open',
+      estimated: 'dashed',
+      none: 'words',
+    });
   });
 
   it('is laid out to a fraction of a pixel', () => {

@@ -15,7 +15,12 @@ import {
 import { tQuantile } from '../../../shared/statistics/student.js';
 import { codeOf, expectClose } from '../../support/close.js';
 
-const SCALE: Scale = { umPerPxX: 0.215054, umPerPxY: 0.215054, relativeUncertainty: 0.00043 / 0.215054, grounds: 'calibrated' };
+const SCALE: Scale = {
+  umPerPxX: 0.215054,
+  umPerPxY: 0.215054,
+  relativeUncertainty: 0.00043 / 0.215054,
+  grounds: 'calibrated',
+};
 
 describe('parts of an uncertainty', () => {
   it('come from limits and steps', () => {
@@ -49,8 +54,20 @@ describe('parts of an uncertainty', () => {
   });
 
   it('have no limit of freedom when none is a sample', () => {
-    expect(welchSatterthwaite([{ u: 1, degreesOfFreedom: null }, { u: 2, degreesOfFreedom: Infinity }])).toBe(Infinity);
-    expectClose(welchSatterthwaite([{ u: 1, degreesOfFreedom: 9 }, { u: 0, degreesOfFreedom: null }]), 9, 1e-12);
+    expect(
+      welchSatterthwaite([
+        { u: 1, degreesOfFreedom: null },
+        { u: 2, degreesOfFreedom: Infinity },
+      ]),
+    ).toBe(Infinity);
+    expectClose(
+      welchSatterthwaite([
+        { u: 1, degreesOfFreedom: 9 },
+        { u: 0, degreesOfFreedom: null },
+      ]),
+      9,
+      1e-12,
+    );
   });
 
   it('refuse what is no uncertainty', () => {
@@ -88,8 +105,16 @@ describe('budget of a length', () => {
     const budget = lengthBudget({ lengthPx: { dx: 300, dy: 400 }, scale, pointingPx: 0.5 });
     expectClose(budget.lengthUm, 103.2279, 1e-6); // √(60² + 84²)
     // along x alone only x counts: √2·0.5·0.2
-    expectClose(lengthBudget({ lengthPx: { dx: 9, dy: 0 }, scale, pointingPx: 0.5 }).contributions[1]?.u, 0.1414214, 1e-6);
-    expectClose(lengthBudget({ lengthPx: { dx: 0, dy: 9 }, scale, pointingPx: 0.5 }).contributions[1]?.u, 0.1484924, 1e-6);
+    expectClose(
+      lengthBudget({ lengthPx: { dx: 9, dy: 0 }, scale, pointingPx: 0.5 }).contributions[1]?.u,
+      0.1414214,
+      1e-6,
+    );
+    expectClose(
+      lengthBudget({ lengthPx: { dx: 0, dy: 9 }, scale, pointingPx: 0.5 }).contributions[1]?.u,
+      0.1484924,
+      1e-6,
+    );
   });
 
   it('does not fall over a length of nothing', () => {
@@ -123,7 +148,11 @@ describe('budget of a length', () => {
   });
 
   it('refuses broken input', () => {
-    expect(codeOf(() => lengthBudget({ lengthPx: { dx: NaN, dy: 0 }, scale: SCALE, pointingPx: 1 }))).toBe('not-finite');
-    expect(codeOf(() => lengthBudget({ lengthPx: { dx: 1, dy: 0 }, scale: SCALE, pointingPx: -1 }))).toBe('not-positive');
+    expect(codeOf(() => lengthBudget({ lengthPx: { dx: NaN, dy: 0 }, scale: SCALE, pointingPx: 1 }))).toBe(
+      'not-finite',
+    );
+    expect(codeOf(() => lengthBudget({ lengthPx: { dx: 1, dy: 0 }, scale: SCALE, pointingPx: -1 }))).toBe(
+      'not-positive',
+    );
   });
 });

@@ -20,7 +20,11 @@ const thirty = samples.spores.L.map((length, i) => body(length, samples.spores.W
 describe('series of thirty', () => {
   it('adds scatter, scale and edge to the mean', () => {
     // √(0.0777² + (0.002·8.24)² + 0.106²), JCGM 100:2008 §5.1.2; 0.42556/√30 = 0.0777; two edges of 0.13/√3
-    const summary = summariseSeries(thirty, { quantity: 'length', relativeScale: 0.002, edgeUm: edgeUncertainty(0.13) });
+    const summary = summariseSeries(thirty, {
+      quantity: 'length',
+      relativeScale: 0.002,
+      edgeUm: edgeUncertainty(0.13),
+    });
     expectClose(summary?.mean, 8.24, 1e-12);
     expectClose(summary?.sd, 0.42556, 1e-4);
     expectClose(summary?.parts.scatter, 0.0777, 1e-3);
@@ -86,6 +90,8 @@ describe('series of one and of none', () => {
   it('has no answer without bodies', () => {
     expect(summariseSeries([], { quantity: 'length', relativeScale: 0.01 })).toBeNull();
     expect(codeOf(() => summariseSeries(thirty, { quantity: 'length', relativeScale: NaN }))).toBe('not-finite');
-    expect(codeOf(() => summariseSeries(thirty, { quantity: 'length', relativeScale: 0, edgeUm: -1 }))).toBe('not-positive');
+    expect(codeOf(() => summariseSeries(thirty, { quantity: 'length', relativeScale: 0, edgeUm: -1 }))).toBe(
+      'not-positive',
+    );
   });
 });

@@ -25,7 +25,10 @@ describe('quantiles', () => {
   });
 
   it('stay within the sample, grow with p and end at its extremes', () => {
-    const values = fc.array(fc.double({ min: -1e6, max: 1e6, noNaN: true }), { minLength: 1 });
+    const values = fc.array(
+      fc.integer({ min: -1_000_000, max: 1_000_000 }).map((thousandths) => thousandths / 1000),
+      { minLength: 1 },
+    );
     const probability = fc.double({ min: 0, max: 1, noNaN: true });
     fc.assert(
       fc.property(values, probability, probability, fc.constantFrom(6, 7, 8), (sample, p, q, type) => {

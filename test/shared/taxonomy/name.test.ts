@@ -26,7 +26,9 @@ describe('a scientific name', () => {
   });
 
   it('has roman ranks and hybrid signs inside', () => {
-    expect(set({ name: 'Stemonitis axifera var. smithii', rank: 'variety' })).toBe('_Stemonitis axifera_ var. _smithii_');
+    expect(set({ name: 'Stemonitis axifera var. smithii', rank: 'variety' })).toBe(
+      '_Stemonitis axifera_ var. _smithii_',
+    );
     expect(set({ name: 'Drosera × obovata' })).toBe('_Drosera_ × _obovata_');
   });
 
@@ -56,9 +58,9 @@ describe('a scientific name', () => {
 
   it('keeps its author with a doubt', () => {
     expect(set({ qualifier: 'cf.', authorship: 'Pers.' })).toBe('_Trichia_ cf. _varia_ Pers.');
-    expect(plainName({ name: 'Trichia varia', rank: 'species', code: 'botanical', qualifier: 'cf.', authorship: 'Pers.' })).toBe(
-      'Trichia cf. varia Pers.',
-    );
+    expect(
+      plainName({ name: 'Trichia varia', rank: 'species', code: 'botanical', qualifier: 'cf.', authorship: 'Pers.' }),
+    ).toBe('Trichia cf. varia Pers.');
   });
 
   it('survives stray spaces and an empty name', () => {

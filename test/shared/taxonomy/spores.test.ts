@@ -53,7 +53,10 @@ describe('spore notation', () => {
   });
 
   it('takes Q only from bodies that have both', () => {
-    const bodies = [{ lengthUm: 8, widthUm: 4 }, { lengthUm: 12, widthUm: null }];
+    const bodies = [
+      { lengthUm: 8, widthUm: 4 },
+      { lengthUm: 12, widthUm: null },
+    ];
     expect(notation({ bodies, fruitBodies: 1, collections: 1, roundTo: 0.1 })).toBe(
       '[2/1/1] 8.0–12.0 × 4.0 µm (n = 2), Q = 2.00, Qm = 2.00',
     );
@@ -61,8 +64,12 @@ describe('spore notation', () => {
 
   it('has no answer for no spores and refuses sizes of nothing', () => {
     expect(notation({ ...set, bodies: [], roundTo: 0.1 })).toBeNull();
-    expect(codeOf(() => notation({ ...set, bodies: [{ lengthUm: 0, widthUm: 3 }], roundTo: 0.1 }))).toBe('not-positive');
-    expect(codeOf(() => notation({ ...set, bodies: [{ lengthUm: 5, widthUm: NaN }], roundTo: 0.1 }))).toBe('not-positive');
+    expect(codeOf(() => notation({ ...set, bodies: [{ lengthUm: 0, widthUm: 3 }], roundTo: 0.1 }))).toBe(
+      'not-positive',
+    );
+    expect(codeOf(() => notation({ ...set, bodies: [{ lengthUm: 5, widthUm: NaN }], roundTo: 0.1 }))).toBe(
+      'not-positive',
+    );
     expect(codeOf(() => notation({ ...set, fruitBodies: 1.5, roundTo: 0.1 }))).toBe('not-a-count');
   });
 });
@@ -70,9 +77,20 @@ describe('spore notation', () => {
 describe('spore shape', () => {
   // Bas 1969, Persoonia 5:285–579 (attribution from memory); a bound takes the lower class: common practice
   it.each([
-    [1, 'globose'], [1.03, 'globose'], [1.05, 'globose'], [1.1, 'subglobose'], [1.15, 'subglobose'],
-    [1.2, 'broadly ellipsoid'], [1.4, 'ellipsoid'], [1.6, 'ellipsoid'], [1.8, 'elongate'], [2.5, 'cylindrical'],
-    [3, 'cylindrical'], [3.2, 'bacilliform'], [8.4 / 8, 'globose'], [6.6 / 6, 'subglobose'],
+    [1, 'globose'],
+    [1.03, 'globose'],
+    [1.05, 'globose'],
+    [1.1, 'subglobose'],
+    [1.15, 'subglobose'],
+    [1.2, 'broadly ellipsoid'],
+    [1.4, 'ellipsoid'],
+    [1.6, 'ellipsoid'],
+    [1.8, 'elongate'],
+    [2.5, 'cylindrical'],
+    [3, 'cylindrical'],
+    [3.2, 'bacilliform'],
+    [8.4 / 8, 'globose'],
+    [6.6 / 6, 'subglobose'],
   ])('of Q %d is %s', (q, term) => expect(shapeTerm(q)).toBe(term));
 
   it('spans classes in words', () => {

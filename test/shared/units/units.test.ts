@@ -27,13 +27,64 @@ describe('lengths', () => {
 
 describe('degrees from Exif', () => {
   it('add minutes and seconds and take their sign from the letter', () => {
-    expectClose(degreesFromRationals([[51, 1], [30, 1], [2645, 100]], 'N'), 51.50734722, 1e-9);
-    expectClose(degreesFromRationals([[0, 1], [7, 1], [3999, 100]], 'W'), -0.127775, 1e-9);
+    expectClose(
+      degreesFromRationals(
+        [
+          [51, 1],
+          [30, 1],
+          [2645, 100],
+        ],
+        'N',
+      ),
+      51.50734722,
+      1e-9,
+    );
+    expectClose(
+      degreesFromRationals(
+        [
+          [0, 1],
+          [7, 1],
+          [3999, 100],
+        ],
+        'W',
+      ),
+      -0.127775,
+      1e-9,
+    );
   });
 
   it('have no answer for 0/0 and refuse a place beyond the poles', () => {
-    expect(degreesFromRationals([[0, 0], [0, 0], [0, 0]], 'N')).toBeNull();
-    expect(codeOf(() => degreesFromRationals([[91, 1], [0, 1], [0, 1]], 'S'))).toBe('not-a-position');
-    expect(degreesFromRationals([[91, 1], [0, 1], [0, 1]], 'E')).toBe(91);
+    expect(
+      degreesFromRationals(
+        [
+          [0, 0],
+          [0, 0],
+          [0, 0],
+        ],
+        'N',
+      ),
+    ).toBeNull();
+    expect(
+      codeOf(() =>
+        degreesFromRationals(
+          [
+            [91, 1],
+            [0, 1],
+            [0, 1],
+          ],
+          'S',
+        ),
+      ),
+    ).toBe('not-a-position');
+    expect(
+      degreesFromRationals(
+        [
+          [91, 1],
+          [0, 1],
+          [0, 1],
+        ],
+        'E',
+      ),
+    ).toBe(91);
   });
 });
