@@ -32,7 +32,8 @@ const WORDS: Readonly<Record<string, Words>> = {
   'taxon-exists': () => $localize`The list of taxa holds this name already.`,
   'held-needs-date': () => $localize`Say until when it is held.`,
   // pictures
-  'type-not-accepted': () => $localize`This kind of file is not taken. Bring JPEG, PNG, TIFF, WebP, AVIF or GIF.`,
+  'type-not-accepted': (f) => notTaken(f['found']),
+  'file-not-opened': () => $localize`The file could not be opened. Was it moved, or its card taken out?`,
   'too-many-pixels': (f) => $localize`The picture has more pixels than fit here (${say(f['most'])} at most).`,
   'too-large': () => $localize`The file is larger than what is taken here.`,
   'not-readable': () => $localize`The file could not be read as a picture. It may be damaged.`,
@@ -59,6 +60,16 @@ const WORDS: Readonly<Record<string, Words>> = {
   'not-a-count': () => $localize`This must be a whole number.`,
   'not-a-probability': () => $localize`This must lie between 0 and 1.`,
 };
+
+/** @param found what the file is, as far as its first bytes tell */
+function notTaken(found: string | number | undefined): string {
+  if (found === 'HEIC') {
+    return $localize`This is HEIC, which is not taken. Let the phone save or send it as JPEG; JPEG, PNG, TIFF (8 or 16 bit) and WebP are taken.`;
+  }
+  return found === undefined || found === 'unknown' || found === 'nothing'
+    ? $localize`This is not a picture of a kind that is taken: JPEG, PNG, TIFF (8 or 16 bit) and WebP are.`
+    : $localize`This is ${say(found)}:kind:, which is not taken. JPEG, PNG, TIFF (8 or 16 bit) and WebP are.`;
+}
 
 const FIELD_WORDS: Readonly<Record<string, string>> = {
   too_small: $localize`Too short or too small.`,
