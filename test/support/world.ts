@@ -33,15 +33,12 @@ export interface ImageOptions {
  * something else. Each method answers the new thing's id.
  */
 export class World {
-  private number = 0;
-
   constructor(private readonly server: Pick<TestApp, 'db' | 'clock'>) {}
 
   async find(owner: Owner, options: FindOptions = {}): Promise<string> {
-    this.number += 1;
     return this.insert('finds', {
       prefix: 'CW',
-      number: this.number,
+      number: await this.nextNumber(),
       owner_id: owner.id,
       visibility: options.visibility ?? 'private',
       held_until: options.heldUntil ?? null,
@@ -114,7 +111,12 @@ export class World {
     return id;
   }
 
-  async series(findId: string, observer: Owner, structure = 'spore', preparationId: string | null = null): Promise<string> {
+  async series(
+    findId: string,
+    observer: Owner,
+    structure = 'spore',
+    preparationId: string | null = null,
+  ): Promise<string> {
     return this.insert('series', {
       find_id: findId,
       preparation_id: preparationId,
@@ -172,6 +174,13 @@ export class World {
     });
     await this.knex('finds').where({ id: findId }).update({ standing_id: id });
     return id;
+  }
+
+  private async nextNumber(): Promise<number> {
+    const counter = this.knex('counters').where({ name: 'find-number' });
+    const [row] = (await counter.increment('value', 1).returning('value')) as { value: number }[];
+    if (!row) throw new Error('There is no counter of finds.');
+    return row.value;
   }
 
   private get knex(): Knex {
