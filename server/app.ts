@@ -3,13 +3,19 @@ import compression from 'compression';
 import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import type { Logger } from 'pino';
+import { createFindRooms, mountFindRooms } from './app-finds.js';
 import { type Clock, instant, today } from './clock.js';
 import type { Config } from './config.js';
+import { CalibrationTable } from './db/calibrations.js';
 import { CounterTable } from './db/counters.js';
 import type { Database } from './db/database.js';
+import { ImageScaleTable } from './db/image-scales.js';
+import { ImageTable } from './db/images.js';
 import { JobTable } from './db/jobs.js';
 import { MailTable } from './db/mails.js';
 import { KeptOriginals } from './db/kept-originals.js';
+import { MeasurementTable } from './db/measurements.js';
+import { RigTable } from './db/rigs.js';
 import { SessionTable } from './db/sessions.js';
 import { ThingTable } from './db/things.js';
 import { TokenTable } from './db/tokens.js';
@@ -32,8 +38,10 @@ import { sessionSecret } from './secret.js';
 import { IntegrityService } from './services/integrity.js';
 import { InvitationService } from './services/invitations.js';
 import { KeepService } from './services/keep.js';
+import { MeasurementService } from './services/measurements.js';
 import { PasswordResetService } from './services/password-resets.js';
 import { PeopleService } from './services/people.js';
+import { ScaleService } from './services/scales.js';
 
 export interface AppOptions {
   readonly config: Config;
@@ -94,6 +102,17 @@ export function createApp(options: AppOptions): App {
   const keep = new KeepService({ db, users, invitations, mails, jobTable, runner: jobs, clock });
   const integrity = new IntegrityService(new KeptOriginals(db), config.dataDir, clock);
 
+  const measurements = new MeasurementService(new MeasurementTable(), clock);
+  const scales = new ScaleService({
+    ...{ db, users, clock, images: new ImageTable(db), scales: new ImageScaleTable(db) },
+    ...{ rigs: new RigTable(db), calibrations: new CalibrationTable(db) },
+    onNewScale: (trx, imageId) => measurements.recompute(imageId, trx),
+  });
+  const findRooms = createFindRooms({
+    ...{ db, clock, measurements, findPrefix: config.findPrefix },
+    applyCalibration: scales.applyCalibration,
+  });
+
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', 'loopback');
@@ -120,6 +139,7 @@ export function createApp(options: AppOptions): App {
   app.post('/api/invitations/accept', limit.links);
   mountSession(mount, { people, resets, invitations, passport, xsrf });
   mountKeep(mount, { keep, invitations, integrity });
+  mountFindRooms(mount, findRooms);
 
   app.use('/api', unknownPath);
   app.use(pages.pages);

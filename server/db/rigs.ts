@@ -58,10 +58,7 @@ export class RigTable {
   }
 
   async settings(rigIds: readonly string[]): Promise<Setting[]> {
-    const rows = await this.db
-      .read<SettingRow>('settings')
-      .whereIn('rig_id', rigIds)
-      .orderBy(['created_at', 'id']);
+    const rows = await this.db.read<SettingRow>('settings').whereIn('rig_id', rigIds).orderBy(['created_at', 'id']);
     return rows.map(toSetting);
   }
 

@@ -10,15 +10,22 @@ describe('the public place', () => {
     ['high', 51.5, -0.1, 13115],
     ['medium', 51.51, -0.13, 1312],
     ['low', 51.507, -0.128, 132],
-  ] as const)('of %s sensitivity is rounded and says how far off it may be', (sensitivity, latitude, longitude, atLeast) => {
-    const place = generalise(EXACT, sensitivity);
-    expect(place).toMatchObject({ latitude, longitude });
-    expect(place.uncertaintyM).toBeGreaterThanOrEqual(atLeast);
-    expect(place.uncertaintyM).toBeLessThanOrEqual(atLeast + 1);
-  });
+  ] as const)(
+    'of %s sensitivity is rounded and says how far off it may be',
+    (sensitivity, latitude, longitude, atLeast) => {
+      const place = generalise(EXACT, sensitivity);
+      expect(place).toMatchObject({ latitude, longitude });
+      expect(place.uncertaintyM).toBeGreaterThanOrEqual(atLeast);
+      expect(place.uncertaintyM).toBeLessThanOrEqual(atLeast + 1);
+    },
+  );
 
   it('of extreme sensitivity has no coordinates', () => {
-    expect(generalise({ ...EXACT, uncertaintyM: 8 }, 'extreme')).toEqual({ latitude: null, longitude: null, uncertaintyM: null });
+    expect(generalise({ ...EXACT, uncertaintyM: 8 }, 'extreme')).toEqual({
+      latitude: null,
+      longitude: null,
+      uncertaintyM: null,
+    });
   });
 
   it('that is not sensitive is the exact one', () => {
@@ -41,7 +48,9 @@ describe('the public place', () => {
   });
 
   it('never writes minus zero', () => {
-    expect(Object.is(generalise({ latitude: -0.01, longitude: -0.02, uncertaintyM: null }, 'high').latitude, 0)).toBe(true);
+    expect(Object.is(generalise({ latitude: -0.01, longitude: -0.02, uncertaintyM: null }, 'high').latitude, 0)).toBe(
+      true,
+    );
   });
 
   it('always holds the true place, wherever that is', () => {
