@@ -60,7 +60,7 @@ export class InvitationService {
     if (!(await this.options.tokens.withdrawInvitation(id))) throw new NotFound('invitation');
   }
 
-  /** @throws {HttpProblem} 410 `link-lapsed` */
+  /** @throws {HttpProblem} 404 `link-lapsed` */
   async read(token: string): Promise<InvitationView> {
     const { users } = this.options;
     const invitation = await this.known(token);
@@ -72,7 +72,7 @@ export class InvitationService {
   /**
    * Makes the person.
    *
-   * @throws {HttpProblem} 410 `link-lapsed`
+   * @throws {HttpProblem} 404 `link-lapsed`
    * @throws {Conflict} `email-taken`, when an account was made for the address meanwhile
    */
   async accept({ token, name, password, email: stated }: AcceptInvitation): Promise<User> {

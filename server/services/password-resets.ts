@@ -51,7 +51,7 @@ export class PasswordResetService {
    * Sets the password and signs the person out everywhere but here.
    *
    * @param sessionId  the session that this is asked in
-   * @throws {HttpProblem} 410 `link-lapsed` for a link that was used, has lapsed or never was
+   * @throws {HttpProblem} 404 `link-lapsed` for a link that was used, has lapsed or never was
    */
   async reset({ token, password }: ResetPassword, sessionId: string): Promise<void> {
     const { db, users, tokens, sessions, passwords, clock } = this.options;
@@ -82,5 +82,5 @@ export class PasswordResetService {
 
 /** One answer for used, lapsed and invented links: nothing is told about which. */
 export function linkLapsed(): HttpProblem {
-  return new HttpProblem(410, 'link-lapsed', 'The link was used, has lapsed, or never was.');
+  return new HttpProblem(404, 'link-lapsed', 'The link was used, has lapsed, or never was.');
 }

@@ -47,8 +47,8 @@ describe('an invitation', () => {
     const token = await invite();
     await (await server.visit()).post('/api/invitations/accept', { token, ...ANSWER }).expect(200);
     const browser = await server.visit();
-    await browser.get(`/api/invitations/${token}`).expect(410);
-    const again = await browser.post('/api/invitations/accept', { token, ...ANSWER }).expect(410);
+    await browser.get(`/api/invitations/${token}`).expect(404);
+    const again = await browser.post('/api/invitations/accept', { token, ...ANSWER }).expect(404);
     expect(again.body).toMatchObject({ type: '/problems/link-lapsed' });
   });
 
@@ -58,8 +58,8 @@ describe('an invitation', () => {
     server.clock.pass(7 * DAY_MS - 1);
     await browser.get(`/api/invitations/${token}`).expect(200);
     server.clock.pass(1);
-    await browser.get(`/api/invitations/${token}`).expect(410);
-    await browser.post('/api/invitations/accept', { token, ...ANSWER }).expect(410);
+    await browser.get(`/api/invitations/${token}`).expect(404);
+    await browser.post('/api/invitations/accept', { token, ...ANSWER }).expect(404);
   });
 
   it('is withdrawn by the keeper', async () => {
@@ -68,7 +68,7 @@ describe('an invitation', () => {
     expect(people.invitations.map(({ email }) => email)).toEqual([EMAIL]);
     await desk.delete(`/api/keep/invitations/${people.invitations[0]?.id}`).expect(204);
     await desk.delete(`/api/keep/invitations/${people.invitations[0]?.id}`).expect(404);
-    await (await server.visit()).post('/api/invitations/accept', { token, ...ANSWER }).expect(410);
+    await (await server.visit()).post('/api/invitations/accept', { token, ...ANSWER }).expect(404);
   });
 
   it('replaces the earlier one to the same address', async () => {
@@ -76,7 +76,7 @@ describe('an invitation', () => {
     server.clock.pass(1000);
     const second = await invite('editor');
     const browser = await server.visit();
-    await browser.get(`/api/invitations/${first}`).expect(410);
+    await browser.get(`/api/invitations/${first}`).expect(404);
     expect((await browser.get(`/api/invitations/${second}`)).body).toMatchObject({ role: 'editor' });
   });
 
@@ -126,13 +126,13 @@ describe('the first keeper', () => {
   it('has one link: starting again replaces it', async () => {
     const first = await tokenPrinted();
     await tokenPrinted();
-    await (await server.visit()).get(`/api/invitations/${first}`).expect(410);
+    await (await server.visit()).get(`/api/invitations/${first}`).expect(404);
   });
 
   it('is nobody any more once there are people', async () => {
     const token = await tokenPrinted();
     await server.addPerson('photographer');
     const body = { token, ...ANSWER, email: EMAIL };
-    await (await server.visit()).post('/api/invitations/accept', body).expect(410);
+    await (await server.visit()).post('/api/invitations/accept', body).expect(404);
   });
 });

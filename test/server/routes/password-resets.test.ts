@@ -22,7 +22,7 @@ describe('a forgotten password', () => {
     await browser.put('/api/password-resets', { token, password: NEW }).expect(204);
     await browser.post('/api/session', { email: person.email, password: PASSWORD }).expect(401);
     await browser.post('/api/session', { email: person.email, password: NEW }).expect(200);
-    const again = await browser.put('/api/password-resets', { token, password: 'a third long password' }).expect(410);
+    const again = await browser.put('/api/password-resets', { token, password: 'a third long password' }).expect(404);
     expect(again.body).toMatchObject({ type: '/problems/link-lapsed' });
   });
 
@@ -50,7 +50,7 @@ describe('a forgotten password', () => {
     await browser.post('/api/password-resets', { email: person.email }).expect(204);
     const token = await tokenInNewestMail(server);
     server.clock.pass(HOUR_MS);
-    await browser.put('/api/password-resets', { token, password: NEW }).expect(410);
+    await browser.put('/api/password-resets', { token, password: NEW }).expect(404);
   });
 
   it('closes the other links that were asked for', async () => {
@@ -62,7 +62,7 @@ describe('a forgotten password', () => {
     const second = await tokenInNewestMail(server);
     expect(second).not.toBe(first);
     await browser.put('/api/password-resets', { token: second, password: NEW }).expect(204);
-    await browser.put('/api/password-resets', { token: first, password: NEW }).expect(410);
+    await browser.put('/api/password-resets', { token: first, password: NEW }).expect(404);
   });
 
   it('keeps of the token nothing but its SHA-256', async () => {
@@ -79,6 +79,6 @@ describe('a forgotten password', () => {
     const keeper = await server.signIn(await server.addPerson('keeper'));
     await keeper.post('/api/keep/invitations', { email: 'new@people.example', role: 'editor' }).expect(200);
     const token = await tokenInNewestMail(server);
-    await keeper.put('/api/password-resets', { token, password: NEW }).expect(410);
+    await keeper.put('/api/password-resets', { token, password: NEW }).expect(404);
   });
 });
