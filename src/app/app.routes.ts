@@ -14,7 +14,6 @@ export const routes: Routes = [
   },
   {
     path: 'taxa',
-    title: $localize`Taxa`,
     loadComponent: async () => (await import('./features/taxa/taxa')).Taxa,
   },
   {
@@ -23,7 +22,6 @@ export const routes: Routes = [
   },
   {
     path: 'about',
-    title: $localize`About`,
     loadComponent: async () => (await import('./features/about/about')).About,
   },
   { path: '', loadChildren: async () => (await import('./features/account/account.routes')).accountRoutes },

@@ -3,7 +3,6 @@ import {
   afterNextRender,
   ChangeDetectionStrategy,
   Component,
-  computed,
   DestroyRef,
   ElementRef,
   inject,
@@ -12,26 +11,23 @@ import {
   PLATFORM_ID,
   viewChild,
 } from '@angular/core';
-import { RouterLink } from '@angular/router';
 import type { GalleryTile } from '@shared/contracts/gallery';
-import { lightWords } from '../../core/light-words';
-import { Picture } from '../../ui/picture/picture';
-import { TaxonName } from '../../ui/taxon-name/taxon-name';
-import { justify } from './justify';
+import { Each, Justified } from '../../ui/justified/justified';
+import { TileLink } from '../../ui/tile-link/tile-link';
 
-/** Wanted width over height of a row, for a phone, a tablet, a laptop and a wide screen (`wall.scss` has the widths). */
-const ROW_ASPECTS = { s: 1.5, m: 3, l: 4.3, xl: 6 } as const;
-
-/**
- * The wall of pictures. Every tile carries its place in four walls, one per width of screen, and the
- * style sheet takes the one that fits: no script lays it out, so nothing shifts.
- */
+/** The wall of pictures: says when its end comes near, and which picture one has come to. */
 @Component({
   selector: 'app-wall',
-  imports: [RouterLink, Picture, TaxonName],
+  imports: [Each, Justified, TileLink],
   changeDetection: ChangeDetectionStrategy.OnPush,
-  templateUrl: './wall.html',
-  styleUrl: './wall.scss',
+  template: `
+    <app-justified>
+      <ng-template [appEach]="tiles()" let-tile let-i="index">
+        <app-tile-link [tile]="tile" [first]="i < 2" />
+      </ng-template>
+    </app-justified>
+    <div #end aria-hidden="true"></div>
+  `,
 })
 export class Wall {
   readonly tiles = input.required<readonly GalleryTile[]>();
@@ -42,22 +38,8 @@ export class Wall {
   /** the tile that is now uppermost in sight */
   readonly placed = output<GalleryTile>();
 
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly end = viewChild.required<ElementRef<HTMLElement>>('end');
-  private readonly list = viewChild.required<ElementRef<HTMLElement>>('list');
-
-  protected readonly placedTiles = computed(() => {
-    const tiles = this.tiles();
-    const aspects = tiles.map((tile) => tile.width / tile.height);
-    const { s, m, l, xl } = ROW_ASPECTS;
-    const walls = { s: justify(aspects, s), m: justify(aspects, m), l: justify(aspects, l), xl: justify(aspects, xl) };
-    return tiles.map((tile, i) => ({
-      tile,
-      light: lightWords(tile.light),
-      places: Object.entries(walls)
-        .flatMap(([size, places]) => [`--n-${size}:${places[i]?.inRow ?? 1}`, `--w-${size}:${places[i]?.share ?? 1}`])
-        .join(';'),
-    }));
-  });
 
   constructor() {
     if (!isPlatformBrowser(inject(PLATFORM_ID))) return;
@@ -84,7 +66,7 @@ export class Wall {
   private watchPlace(): () => void {
     let timer: ReturnType<typeof setTimeout> | undefined;
     const place = () => {
-      const items = Array.from(this.list().nativeElement.children);
+      const items = Array.from(this.host.nativeElement.querySelectorAll('li'));
       const at = items.findIndex((item) => item.getBoundingClientRect().bottom > 0);
       const tile = this.tiles()[at];
       if (tile) this.placed.emit(tile);

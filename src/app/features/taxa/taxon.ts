@@ -1,9 +1,55 @@
-import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, effect, inject, input, RESPONSE_INIT } from '@angular/core';
+import { MatButtonModule } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
+import { taxonRoutes } from '@shared/contracts/taxa';
+import { plainName } from '@shared/taxonomy/name';
+import { Api } from '../../core/api';
+import { toApiProblem } from '../../core/api-problem';
+import { PageMeta } from '../../core/page-meta';
+import { rankWords } from '../../core/rank-words';
+import { Empty } from '../../ui/empty/empty';
+import { Each, Justified } from '../../ui/justified/justified';
+import { renditionUrl } from '../../ui/picture/picture';
+import { ProblemBox } from '../../ui/problem/problem';
+import { Rule } from '../../ui/rule/rule';
+import { TaxonName } from '../../ui/taxon-name/taxon-name';
+import { TileLink } from '../../ui/tile-link/tile-link';
+import { PublishedSizes } from './published-sizes';
 
+/** One taxon: what it is called, where it belongs, what books say of its sizes, and its pictures here. */
 @Component({
   selector: 'app-taxon',
+  imports: [MatButtonModule, RouterLink, Each, Empty, Justified, ProblemBox, PublishedSizes, Rule, TaxonName, TileLink],
   changeDetection: ChangeDetectionStrategy.OnPush,
-  template: `<h1 class="page-title" i18n>Taxon</h1>`,
-  host: { class: 'page' },
+  templateUrl: './taxon.html',
+  styleUrl: './taxon.scss',
 })
-export class Taxon {}
+export class Taxon {
+  /** from the address */
+  readonly taxonId = input.required<string>();
+
+  protected readonly answer = inject(Api).resource(taxonRoutes.read, () => ({ params: { taxonId: this.taxonId() } }));
+  protected readonly taxon = computed(() => (this.answer.hasValue() ? this.answer.value() : null));
+  protected readonly missing = computed(() => toApiProblem(this.answer.error()).code === 'not-found');
+  protected readonly rank = rankWords;
+
+  constructor() {
+    const meta = inject(PageMeta);
+    const response = inject(RESPONSE_INIT, { optional: true });
+    effect(() => {
+      const taxon = this.taxon();
+      if (taxon) {
+        const name = plainName(taxon.name);
+        const cover = taxon.pictures[0];
+        meta.describe({
+          title: name,
+          description: $localize`${name}: published sizes with their sources, and pictures with a scale.`,
+          image: cover ? renditionUrl(cover, Math.max(...cover.renditionWidths, 0)) : null,
+        });
+      }
+      if (!this.answer.error()) return;
+      if (response) response.status = this.missing() ? 404 : 503;
+      meta.describe({ title: $localize`Taxon`, description: '', image: null });
+    });
+  }
+}

@@ -6,7 +6,7 @@ import { ScaleBar } from '../scale-bar/scale-bar';
  * A picture with its true bar, in the width of its place. Its height is known before it loads, and
  * its own colours stand there until it has.
  *
- * A place may set `--frame` (width over height): flatter than the picture, it cuts it above and below;
+ * A `frame` (width over height; a style sheet may set it as `--frame`) that is flatter than the picture cuts it above and below;
  * a narrower one is not used, since cutting at the sides would make the bar's share of the width a lie.
  */
 @Component({
@@ -42,7 +42,7 @@ import { ScaleBar } from '../scale-bar/scale-bar';
       object-fit: cover;
     }
   `,
-  host: { '[style.--aspect]': 'aspect()', '[style.background]': 'colours()' },
+  host: { '[style.--aspect]': 'aspect()', '[style.--frame]': 'frame()', '[style.background]': 'colours()' },
 })
 export class Picture {
   readonly tile = input.required<ImageTile>();
@@ -51,6 +51,7 @@ export class Picture {
   readonly bar = input(true);
   /** seen at once: loaded first, not when it comes near */
   readonly first = input(false);
+  readonly frame = input<number | null>(null);
 
   private readonly widths = computed(() => this.tile().renditionWidths.toSorted((a, b) => a - b));
   protected readonly src = computed(() => renditionUrl(this.tile(), middleOf(this.widths())));

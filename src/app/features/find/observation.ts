@@ -1,0 +1,51 @@
+import { ChangeDetectionStrategy, Component, computed, input, output, signal } from '@angular/core';
+import { MatButtonModule } from '@angular/material/button';
+import type { FindView, ObservationView } from '@shared/contracts/finds';
+import { dayWords } from '../../core/day-words';
+import { Each, Justified } from '../../ui/justified/justified';
+import { AddPreparation } from './add-preparation';
+import { FindPictureCard } from './find-picture-card';
+import { conditionWords, kindWords } from './observation-words';
+
+/** One dated look at the find: its date and kind stand as its title, its pictures by preparation. */
+@Component({
+  selector: 'app-observation',
+  imports: [MatButtonModule, AddPreparation, Each, FindPictureCard, Justified],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  templateUrl: './observation.html',
+  styleUrl: './observation.scss',
+})
+export class Observation {
+  readonly observation = input.required<ObservationView>();
+  readonly findId = input.required<string>();
+  readonly finderId = input.required<string>();
+  readonly mayEdit = input(false);
+  readonly changed = output<FindView>();
+
+  protected readonly adding = signal(false);
+  /** narrower rooms than the gallery's */
+  protected readonly rows = { s: 1.5, m: 2.8, l: 3.2, xl: 4.4 };
+
+  protected readonly day = computed(() => dayWords(this.observation().observedOn));
+  protected readonly kind = computed(() => kindWords(this.observation().kind));
+  /** said only where somebody else than the finder looked */
+  protected readonly observer = computed(() => {
+    const { observer } = this.observation();
+    return observer.id === this.finderId() ? null : observer.name;
+  });
+  protected readonly loose = computed(() => this.observation().pictures.filter((p) => p.preparationId === null));
+  protected readonly preparations = computed(() =>
+    this.observation().preparations.map((preparation) => ({
+      ...preparation,
+      about: [preparation.part, preparation.medium, preparation.stain, conditionWords(preparation.condition)]
+        .filter(Boolean)
+        .join(', '),
+      pictures: this.observation().pictures.filter((picture) => picture.preparationId === preparation.id),
+    })),
+  );
+
+  protected take(find: FindView): void {
+    this.adding.set(false);
+    this.changed.emit(find);
+  }
+}

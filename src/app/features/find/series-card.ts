@@ -1,0 +1,82 @@
+import type { FindView } from '@shared/contracts/finds';
+import type { SeriesView } from '@shared/contracts/series';
+import type { Scale } from '@shared/scale/scale';
+import { notation } from '@shared/taxonomy/spore-notation';
+import { groundsOf, summaryOf, valuesUm } from '../../core/series-summary';
+import { structureWords } from '../../core/structure-words';
+import type { PublishedBand } from './strip-plot-layout';
+
+const SPORE = 'spore';
+/** µm; the finer step is left to those who can justify it */
+const ROUND_TO = 0.1;
+
+export interface SizeLine {
+  readonly dimension: 'length' | 'width';
+  readonly words: string;
+  readonly um: number;
+  /** combined standard uncertainty of the mean, µm */
+  readonly u: number;
+  readonly values: readonly number[];
+  readonly bands: readonly PublishedBand[];
+}
+
+/** One series as the find shows it. */
+export interface SeriesCard {
+  readonly id: string;
+  readonly title: string;
+  readonly told: string;
+  readonly n: number;
+  /** null: no body has a scale, so there is nothing in µm */
+  readonly grounds: Scale['grounds'] | null;
+  readonly sizes: readonly SizeLine[];
+  readonly notation: string | null;
+}
+
+/** @param find whose series it is: its fruit bodies and the published sizes to hold the series against */
+export function seriesCard(series: SeriesView, find: Pick<FindView, 'fruitBodies' | 'publishedSizes'>): SeriesCard {
+  return {
+    id: series.id,
+    title: structureWords(series.structure),
+    told: toldOf(series),
+    n: series.bodies.length,
+    grounds: groundsOf(series),
+    sizes: (['length', 'width'] as const).flatMap((dimension) => sizeLine(series, dimension, find.publishedSizes)),
+    notation: series.structure === SPORE ? sporeNotation(series, find.fruitBodies) : null,
+  };
+}
+
+function sizeLine(
+  series: SeriesView,
+  dimension: 'length' | 'width',
+  published: FindView['publishedSizes'],
+): SizeLine[] {
+  const summary = summaryOf(series, dimension);
+  if (!summary) return [];
+  const bands = published
+    .filter((size) => size.structure === series.structure && size.dimension === dimension)
+    .map((size) => ({ label: size.taxonName, source: sourceOf(size), low: size.minUm, high: size.maxUm }));
+  const words = dimension === 'length' ? $localize`along` : $localize`across`;
+  return [{ dimension, words, um: summary.mean, u: summary.u, values: valuesUm(series, dimension), bands }];
+}
+
+function sourceOf({ source, year }: FindView['publishedSizes'][number]): string {
+  const author = source.split(/[,(]/)[0]?.trim() ?? source;
+  return year === null ? author : `${author} ${year}`;
+}
+
+/** Of the spores that have a length in µm; one collection, the find itself. */
+function sporeNotation(series: SeriesView, fruitBodies: number): string | null {
+  const bodies = series.bodies.flatMap(({ lengthUm, widthUm }) => (lengthUm === null ? [] : [{ lengthUm, widthUm }]));
+  return notation({ bodies, fruitBodies, collections: 1, roundTo: ROUND_TO });
+}
+
+function toldOf({ preparation, edgeRule, ornamentIncluded, observer }: SeriesView): string {
+  const edge = { outer: $localize`outer edge`, inner: $localize`inner edge`, middle: $localize`middle of the wall` };
+  const ornament =
+    ornamentIncluded === null
+      ? $localize`ornament not said`
+      : ornamentIncluded
+        ? $localize`ornament in`
+        : $localize`ornament out`;
+  return [preparation?.title ?? $localize`no preparation`, edge[edgeRule], ornament, observer.name].join(' · ');
+}
