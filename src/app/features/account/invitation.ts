@@ -1,4 +1,3 @@
-import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject, input, signal } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
@@ -8,6 +7,7 @@ import { Router } from '@angular/router';
 import { sessionRoutes } from '@shared/contracts/session';
 import { Api } from '../../core/api';
 import { toApiProblem, type ApiProblem } from '../../core/api-problem';
+import { dayWords } from '../../core/day-words';
 import { SessionStore } from '../../core/session-store';
 import { controlWords } from '../../ui/forms/control-words';
 import { focusFirstInvalid, showFieldProblems } from '../../ui/forms/field-problems';
@@ -18,7 +18,7 @@ import { roleWords } from './role-words';
 
 @Component({
   selector: 'app-invitation',
-  imports: [DatePipe, ReactiveFormsModule, MatButtonModule, MatFormFieldModule, MatInputModule, ProblemBox, Rule],
+  imports: [ReactiveFormsModule, MatButtonModule, MatFormFieldModule, MatInputModule, ProblemBox, Rule],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './invitation.html',
   styleUrl: './account.scss',
@@ -38,6 +38,7 @@ export class Invitation {
   protected readonly canAskAgain = computed(() => toApiProblem(this.invitation.error()).status !== 404);
   protected readonly busy = signal(false);
   protected readonly problem = signal<ApiProblem | null>(null);
+  protected readonly dayWords = dayWords;
   protected readonly words = controlWords;
   protected readonly roleWords = roleWords;
   protected readonly form = inject(NonNullableFormBuilder).group({

@@ -1,4 +1,3 @@
-import { DatePipe } from '@angular/common';
 import {
   afterNextRender,
   ChangeDetectionStrategy,
@@ -16,6 +15,7 @@ import {
 import { MatButtonModule } from '@angular/material/button';
 import { mdiCheckBold } from '@mdi/js';
 import type { TrayPicture } from '@shared/contracts/images';
+import { dayWords } from '../../../core/day-words';
 import { Icon } from '../../../ui/icon/icon';
 import { Picture } from '../../../ui/picture/picture';
 import { byteWords } from './byte-words';
@@ -38,7 +38,7 @@ const STEPS: Readonly<Record<string, Step>> = {
  */
 @Component({
   selector: 'app-picture-grid',
-  imports: [DatePipe, MatButtonModule, Icon, Picture],
+  imports: [MatButtonModule, Icon, Picture],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './picture-grid.html',
   styleUrl: './picture-grid.scss',
@@ -52,6 +52,7 @@ export class PictureGrid {
 
   protected readonly icons = { check: mdiCheckBold };
   protected readonly lightWords = LIGHT_WORDS;
+  protected readonly dayWords = dayWords;
   protected readonly bytes = byteWords;
   protected readonly columns = signal(4);
   protected readonly focusedId = signal<string | null>(null);

@@ -1,5 +1,4 @@
 import { CdkScrollable } from '@angular/cdk/scrolling';
-import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
@@ -12,12 +11,13 @@ import { findRoutes, type FindView } from '@shared/contracts/finds';
 import type { TrayPicture } from '@shared/contracts/images';
 import { Api } from '../../../../core/api';
 import { toApiProblem, type ApiProblem } from '../../../../core/api-problem';
+import { dayWords, today } from '../../../../core/day-words';
 import { focusFirstInvalid, showFieldProblems } from '../../../../ui/forms/field-problems';
 import { Icon } from '../../../../ui/icon/icon';
 import { Picture } from '../../../../ui/picture/picture';
 import { ProblemBox } from '../../../../ui/problem/problem';
 import { TaxonName } from '../../../../ui/taxon-name/taxon-name';
-import { fromFiles, localDay } from './find-draft';
+import { fromFiles } from './find-draft';
 import { dateHintOf } from './make-find';
 import { observationGroup, ObservationFields } from './observation-fields';
 
@@ -26,7 +26,6 @@ import { observationGroup, ObservationFields } from './observation-fields';
   selector: 'app-add-to-find',
   imports: [
     CdkScrollable,
-    DatePipe,
     ReactiveFormsModule,
     MatButtonModule,
     MatDialogModule,
@@ -50,6 +49,7 @@ export class AddToFind {
   private readonly files = fromFiles(this.pictures);
 
   protected readonly icons = { close: mdiClose };
+  protected readonly dayWords = dayWords;
   protected readonly count = this.pictures.length;
   protected readonly dateHint = dateHintOf(this.files);
   protected readonly finds = this.api.resource(findRoutes.mine, () => ({}));
@@ -59,7 +59,7 @@ export class AddToFind {
   protected readonly missing = signal(false);
   protected readonly problem = signal<ApiProblem | null>(null);
   protected readonly form = observationGroup(inject(NonNullableFormBuilder), {
-    day: this.files.day ?? localDay(new Date()),
+    day: this.files.day ?? today(),
     kind: 'at the bench',
   });
 

@@ -25,12 +25,6 @@ export function fromFiles(pictures: readonly TrayPicture[]): FromFiles {
   };
 }
 
-/** Today where the person is, `2025-11-03`. */
-export function localDay(now: Date): string {
-  const two = (value: number) => String(value).padStart(2, '0');
-  return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`;
-}
-
 /** Words of fewer letters are *at*, *the*, *near*: they give nothing away. */
 const TELLING_LETTERS = 4;
 

@@ -13,13 +13,14 @@ import type { TrayPicture } from '@shared/contracts/images';
 import { VISIBILITIES } from '@shared/permission/can';
 import { Api } from '../../../../core/api';
 import { toApiProblem, type ApiProblem } from '../../../../core/api-problem';
+import { today } from '../../../../core/day-words';
 import { SessionStore } from '../../../../core/session-store';
 import { controlWords } from '../../../../ui/forms/control-words';
 import { focusFirstInvalid, showFieldProblems } from '../../../../ui/forms/field-problems';
 import { Icon } from '../../../../ui/icon/icon';
 import { Picture } from '../../../../ui/picture/picture';
 import { ProblemBox } from '../../../../ui/problem/problem';
-import { fromFiles, LastFindMemory, lastFindOf, lastFindWords, localDay, type LastFind, type Visibility } from './find-draft';
+import { fromFiles, LastFindMemory, lastFindOf, lastFindWords, type LastFind, type Visibility } from './find-draft';
 import { observationGroup, ObservationFields } from './observation-fields';
 import { PlaceFields, placeGroup } from './place-fields';
 import { VISIBILITY_WORDS } from './place-words';
@@ -73,7 +74,7 @@ export class MakeFind {
 
   /** Shaped like `NewFind`, so that what the server says finds its field. */
   protected readonly form = this.builder.group({
-    observation: observationGroup(this.builder, { day: this.files.day ?? localDay(new Date()), kind: 'in the field' }),
+    observation: observationGroup(this.builder, { day: this.files.day ?? today(), kind: 'in the field' }),
     place: placeGroup(this.builder, this.files.place),
     visibility: this.builder.control<Visibility>('private'),
     heldUntil: new FormControl<string | null>(null, neededWhenHeld),
