@@ -4,6 +4,7 @@ import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import type { Logger } from 'pino';
 import { createFindRooms, mountFindRooms } from './app-finds.js';
+import { createPictureRooms, type PictureRooms } from './app-pictures.js';
 import { type Clock, instant, today } from './clock.js';
 import type { Config } from './config.js';
 import { CalibrationTable } from './db/calibrations.js';
@@ -33,6 +34,7 @@ import { builtApplication, createPages, type PageOptions } from './pages.js';
 import { Passwords } from './passwords.js';
 import { mountKeep } from './routes/keep.js';
 import { Mount } from './routes/mount.js';
+import { mountPortraits } from './routes/portraits.js';
 import { mountSession } from './routes/session.js';
 import { sessionSecret } from './secret.js';
 import { IntegrityService } from './services/integrity.js';
@@ -41,6 +43,8 @@ import { KeepService } from './services/keep.js';
 import { MeasurementService } from './services/measurements.js';
 import { PasswordResetService } from './services/password-resets.js';
 import { PeopleService } from './services/people.js';
+import { PortraitService } from './services/portraits.js';
+import type { ChildLimits } from './pictures/child-process.js';
 import { ScaleService } from './services/scales.js';
 
 export interface AppOptions {
@@ -56,11 +60,15 @@ export interface AppOptions {
   readonly mail?: MailTransport;
   /** left out: the built application and its own rendering */
   readonly pages?: Pick<PageOptions, 'folder' | 'load' | 'patienceMs'>;
+  /** left out: what large pictures need */
+  readonly intakeLimits?: ChildLimits;
 }
 
 export interface App {
   readonly express: Express;
   readonly jobs: JobRunner;
+  /** brings in files that came by another way than an upload */
+  readonly bringIn: PictureRooms['arrivals']['bringIn'];
   /** starts background work: jobs, outgoing mail */
   start(): void;
   /** the link by which the first keeper comes in; null when there are people */
@@ -80,7 +88,17 @@ export function createApp(options: AppOptions): App {
 
   const jobTable = new JobTable(db);
   // how a job of each kind is done; call `jobs.nudge()` after the transaction that enqueued one
-  const jobs = new JobRunner({ jobs: jobTable, clock, log, handlers: { mail: ({ about }) => postbox.deliver(about) } });
+  const jobs: JobRunner = new JobRunner({
+    ...{ jobs: jobTable, clock, log },
+    handlers: {
+      mail: ({ about }) => postbox.deliver(about),
+      intake: (job, signal) => pictureRooms.jobs.handlers.intake(job, signal),
+      'forget-files': (job) => pictureRooms.jobs.handlers['forget-files'](job),
+    },
+    atOnce: { intake: 2 }, // one reads while the other writes
+    attempts: { intake: 3 },
+    givenUp: { intake: (trx, job) => pictureRooms.jobs.givenUp.intake(trx, job) },
+  });
 
   const mails = new MailTable(db);
   const transport = options.mail ?? new LocalMail(join(config.dataDir, 'mail'), config.publicUrl);
@@ -103,14 +121,21 @@ export function createApp(options: AppOptions): App {
   const integrity = new IntegrityService(new KeptOriginals(db), config.dataDir, clock);
 
   const measurements = new MeasurementService(new MeasurementTable(), clock);
+  const images = new ImageTable(db);
+  const imageScales = new ImageScaleTable(db);
   const scales = new ScaleService({
-    ...{ db, users, clock, images: new ImageTable(db), scales: new ImageScaleTable(db) },
+    ...{ db, users, clock, images, scales: imageScales },
     ...{ rigs: new RigTable(db), calibrations: new CalibrationTable(db) },
     onNewScale: (trx, imageId) => measurements.recompute(imageId, trx),
   });
   const findRooms = createFindRooms({
     ...{ db, clock, measurements, findPrefix: config.findPrefix },
     applyCalibration: scales.applyCalibration,
+  });
+
+  const pictureRooms = createPictureRooms({
+    ...{ config, db, clock, log, images, imageScales, users, jobTable, scales, nudge: () => jobs.nudge() },
+    ...(options.intakeLimits && { intakeLimits: options.intakeLimits }),
   });
 
   const app = express();
@@ -138,21 +163,32 @@ export function createApp(options: AppOptions): App {
   app.put('/api/password-resets', limit.links);
   app.post('/api/invitations/accept', limit.links);
   mountSession(mount, { people, resets, invitations, passport, xsrf });
+  mountPortraits(mount, app, new PortraitService(config.dataDir, users));
   mountKeep(mount, { keep, invitations, integrity });
   mountFindRooms(mount, findRooms);
+  pictureRooms.mount(app, mount);
 
   app.use('/api', unknownPath);
   app.use(pages.pages);
   app.use(problems(log));
 
+  let starting: Promise<void> = Promise.resolve();
   return {
     express: app,
     jobs,
+    bringIn: (input) => pictureRooms.arrivals.bringIn(input),
     start() {
-      jobs.start();
+      starting = pictureRooms.start().then(
+        () => jobs.start(),
+        (error: unknown) => {
+          log.error({ err: error }, 'the data folder could not be taken up');
+        },
+      );
     },
     firstKeeperLink: () => invitations.forFirstKeeper(),
     async stop() {
+      await starting;
+      pictureRooms.stop();
       await jobs.stop();
     },
   };

@@ -32,7 +32,9 @@ describe('the configuration', () => {
     ['FIND_PREFIX', 'c w'],
     ['LOG_LEVEL', 'loud'],
   ])('refuses %s=%s and names it', (name, value) => {
-    expect(() => readConfig({ [name]: value })).toThrow(new RegExp(`settings in the environment are not right:\n  ${name}: .+`));
+    expect(() => readConfig({ [name]: value })).toThrow(
+      new RegExp(`settings in the environment are not right:\n  ${name}: .+`),
+    );
   });
 
   it('names everything that is wrong at once', () => {

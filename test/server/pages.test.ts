@@ -38,7 +38,12 @@ describe('pages', () => {
   const visitor = async () => (await server.visit()).agent;
 
   it('come rendered to a visitor, from the API of this very server', async () => {
-    const answer = await (await visitor()).get('/finds/0198?from=taxa').expect(200).expect('Content-Type', /^text\/html/);
+    const answer = await (
+      await visitor()
+    )
+      .get('/finds/0198?from=taxa')
+      .expect(200)
+      .expect('Content-Type', /^text\/html/);
     expect(answer.text).toContain('<h1>Rendered 1</h1>');
     expect(rendered[0]).toMatchObject({ url: '/finds/0198?from=taxa', publicUrl: 'http://motes.example' });
     expect(rendered[0]?.origin).toMatch(/^http:\/\/127\.0\.0\.1:\d+$/);
@@ -81,7 +86,8 @@ describe('pages', () => {
 
   it('are rendered once for each revision of what is public, and each day', async () => {
     const agent = await visitor();
-    const heading = async (path: string): Promise<string | undefined> => (await agent.get(path)).text.match(/Rendered \d/)?.[0];
+    const heading = async (path: string): Promise<string | undefined> =>
+      (await agent.get(path)).text.match(/Rendered \d/)?.[0];
     expect([await heading('/taxa'), await heading('/taxa')]).toEqual(['Rendered 1', 'Rendered 1']);
     expect(await heading('/taxa?q=mite')).toBe('Rendered 2');
     await server.db.write('counters').where({ name: 'public-revision' }).increment('value', 1);
@@ -146,7 +152,13 @@ describe('pages', () => {
   it('are 404 where there is none, with the empty page for a person and without for a file', async () => {
     const agent = await visitor();
     expect((await agent.get('/no/such/page').expect(404)).text).toContain('<app-root');
-    for (const path of ['/missing.js', '/main-ZZZZZZZZ.js', '/index.html', '/index.csr.html', '/%2e%2e/server/server.mjs']) {
+    for (const path of [
+      '/missing.js',
+      '/main-ZZZZZZZZ.js',
+      '/index.html',
+      '/index.csr.html',
+      '/%2e%2e/server/server.mjs',
+    ]) {
       const answer = await agent.get(path).expect(404);
       expect(answer.headers['content-type']).toMatch(/^application\/problem\+json/);
     }

@@ -94,6 +94,9 @@ describe('outgoing mail', () => {
     expect((await new MailTable(server.db).list())[0]).toMatchObject({ sentAt: null, lastError: 'the disk is full' });
     server.clock.pass(60_000);
     expect(await openMailbox(server)).toHaveLength(1);
-    expect((await new MailTable(server.db).list())[0]).toMatchObject({ sentAt: expect.any(String) as string, lastError: null });
+    expect((await new MailTable(server.db).list())[0]).toMatchObject({
+      sentAt: expect.any(String) as string,
+      lastError: null,
+    });
   });
 });

@@ -39,9 +39,13 @@ describe('tries', () => {
 
   it('of many people’s passwords from one place end too, for that place', async () => {
     const browser = await server.visit();
-    const tries = await statuses(6, (i) => browser.post('/api/session', { email: `p${i}@people.example`, password: 'x' }));
+    const tries = await statuses(6, (i) =>
+      browser.post('/api/session', { email: `p${i}@people.example`, password: 'x' }),
+    );
     expect(tries).toEqual([401, 401, 401, 401, 401, 429]);
-    const elsewhere = browser.post('/api/session', { email: NOBODY, password: 'x' }).set('X-Forwarded-For', '192.0.2.7');
+    const elsewhere = browser
+      .post('/api/session', { email: NOBODY, password: 'x' })
+      .set('X-Forwarded-For', '192.0.2.7');
     expect((await elsewhere).status).toBe(401);
   });
 

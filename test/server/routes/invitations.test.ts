@@ -34,7 +34,9 @@ describe('an invitation', () => {
     });
     const accepted = await browser.post('/api/invitations/accept', { token, ...ANSWER }).expect(200);
     expect(accepted.body).toMatchObject({ user: { email: EMAIL, name: ANSWER.name, role: 'identifier' } });
-    await browser.put('/api/me', { name: 'B. Quine', creditLine: 'B. Quine', defaultLicence: 'by', fingertipMm: 16.5 }).expect(200);
+    await browser
+      .put('/api/me', { name: 'B. Quine', creditLine: 'B. Quine', defaultLicence: 'by', fingertipMm: 16.5 })
+      .expect(200);
     expect((await browser.get('/api/session')).body).toMatchObject({ user: { name: 'B. Quine', fingertipMm: 16.5 } });
   });
 

@@ -61,7 +61,13 @@ describe('the keeper’s desk', () => {
   });
 
   it('lists jobs, what was given up first, and takes it up again', async () => {
-    const job = { about: 'x', payload: 'null', attempts: 5, run_after: '2026-02-01T00:00:00Z', created_at: '2026-02-01T00:00:00Z' };
+    const job = {
+      about: 'x',
+      payload: 'null',
+      attempts: 5,
+      run_after: '2026-02-01T00:00:00Z',
+      created_at: '2026-02-01T00:00:00Z',
+    };
     const [gone, done] = [newId(), newId()];
     await server.db.write('jobs').insert([
       { ...job, id: gone, kind: 'unknown', state: 'failed', last_error: 'the disk is full' },

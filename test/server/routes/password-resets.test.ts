@@ -37,7 +37,11 @@ describe('a forgotten password', () => {
 
   it('signs the person out everywhere else, and nobody else', async () => {
     const other = await server.addPerson('editor');
-    const [library, phone, others] = [await server.signIn(person), await server.signIn(person), await server.signIn(other)];
+    const [library, phone, others] = [
+      await server.signIn(person),
+      await server.signIn(person),
+      await server.signIn(other),
+    ];
     await phone.post('/api/password-resets', { email: person.email }).expect(204);
     await phone.put('/api/password-resets', { token: await tokenInNewestMail(server), password: NEW }).expect(204);
     expect((await library.get('/api/session')).body).toMatchObject({ user: null });

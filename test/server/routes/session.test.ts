@@ -36,6 +36,9 @@ describe('the session', () => {
   it('names each field that is wrong', async () => {
     const answer = await (await server.visit()).post('/api/session', { email: 'not an address' });
     expect(answer.status).toBe(422);
-    expect((answer.body as { errors: { pointer: string }[] }).errors.map((error) => error.pointer)).toEqual(['#/email', '#/password']);
+    expect((answer.body as { errors: { pointer: string }[] }).errors.map((error) => error.pointer)).toEqual([
+      '#/email',
+      '#/password',
+    ]);
   });
 });
