@@ -28,6 +28,8 @@ export interface JobRunnerOptions {
   readonly handlers: Readonly<Record<string, JobHandler>>;
   /** how many of a kind may run side by side; 1 where not named */
   readonly atOnce?: Readonly<Record<string, number>>;
+  /** tries of a kind, the first included, before it is given up; `MOST_ATTEMPTS` where not named */
+  readonly attempts?: Readonly<Record<string, number>>;
   /** what giving a job up means for what it worked on, written in the same transaction */
   readonly givenUp?: Readonly<Record<string, (trx: Knex, job: Job) => Promise<void>>>;
 }
@@ -116,7 +118,8 @@ export class JobRunner {
   private async attempt(job: Job): Promise<void> {
     const { jobs, clock, handlers, log } = this.options;
     const signal = this.stopping.signal;
-    if (job.attempts > MOST_ATTEMPTS) {
+    const most = this.options.attempts?.[job.kind] ?? MOST_ATTEMPTS;
+    if (job.attempts > most) {
       // it was begun that often and never came back, which is what a job that ends the server looks like
       await this.giveUp(job, job.lastError ?? 'the server ended while it was worked on');
       return;
@@ -131,7 +134,7 @@ export class JobRunner {
       }
       const message = error instanceof Error ? error.message : String(error);
       log.warn({ err: error, job: job.id, kind: job.kind, attempts: job.attempts }, 'a job failed');
-      if (job.attempts >= MOST_ATTEMPTS) await this.giveUp(job, message);
+      if (job.attempts >= most) await this.giveUp(job, message);
       else await jobs.postpone(job.id, message, after(clock.now(), FIRST_PAUSE_MS * 4 ** (job.attempts - 1)));
     }
   }

@@ -45,7 +45,7 @@ export class TestApp {
 
   static async open(
     env: Record<string, string> = {},
-    options: Partial<Pick<AppOptions, 'limits' | 'mail' | 'pages'>> = {},
+    options: Partial<Pick<AppOptions, 'limits' | 'mail' | 'pages' | 'intakeLimits'>> = {},
   ): Promise<TestApp> {
     const dataDir = mkdtempSync(join(tmpdir(), 'motebook-test-'));
     const config = readConfig({ DATA_DIR: dataDir, DEMO: 'off', LOG_LEVEL: 'silent', ...env });

@@ -1,0 +1,75 @@
+import type { EditImage, ImageView } from '../../shared/contracts/images.js';
+import { rayleigh } from '../../shared/scale/optics.js';
+import { type Actor, can, type Thing } from '../../shared/permission/can.js';
+import { type Clock, today } from '../clock.js';
+import type { ImageScaleTable } from '../db/image-scales.js';
+import type { ImageSurroundingsTable } from '../db/image-surroundings.js';
+import { type ImageTable, isReady, type ReadyImage } from '../db/images.js';
+import type { ThingTable } from '../db/things.js';
+import { Conflict, Invalid, NotFound } from '../problem.js';
+import { toImageTile } from './image-tile.js';
+
+export interface ImageServiceOptions {
+  readonly images: ImageTable;
+  readonly scales: ImageScaleTable;
+  readonly surroundings: ImageSurroundingsTable;
+  readonly things: ThingTable;
+  readonly clock: Clock;
+}
+
+/** Pictures as they are looked at and described. */
+export class ImageService {
+  constructor(private readonly options: ImageServiceOptions) {}
+
+  /** @throws {Conflict} `not-ready` while it has not been taken in */
+  async ready(imageId: string): Promise<ReadyImage> {
+    const image = await this.options.images.find(imageId);
+    if (!image) throw new NotFound('image');
+    if (!isReady(image)) throw new Conflict('not-ready', 'The picture has not been taken in yet.', { state: image.state });
+    return image;
+  }
+
+  async view(actor: Actor, imageId: string): Promise<ImageView> {
+    const { images, scales, surroundings, things, clock } = this.options;
+    const image = await this.ready(imageId);
+    const around = await surroundings.of(image);
+    const current = image.currentScaleId === null ? null : await scales.find(image.currentScaleId);
+    const versions = await scales.views(image.id);
+    const thing = (await things.load('image', imageId)) as Extract<Thing, { kind: 'image' }>;
+    const day = today(clock);
+    return {
+      ...toImageTile(image, current?.scale ?? null),
+      title: image.title,
+      role: image.role,
+      light: image.light,
+      licence: image.licence,
+      creditLine: image.creditLine,
+      owner: around.owner,
+      bitDepth: image.bitDepth,
+      format: image.format,
+      sha256: image.sha256,
+      originalName: image.originalName,
+      capture: image.capture,
+      settingId: image.settingId,
+      find: around.find,
+      preparation: around.preparation,
+      currentScale: versions.find((version) => version.id === image.currentScaleId) ?? null,
+      siblings: await images.siblings(image),
+      resolutionUm: around.numericalAperture === null ? null : rayleigh(around.numericalAperture),
+      may: { edit: can(actor, 'image.edit', thing, day), annotate: can(actor, 'image.annotate', thing, day) },
+    };
+  }
+
+  /** @throws {Invalid} for a preparation of another observation */
+  async edit(imageId: string, edit: EditImage): Promise<void> {
+    const { images, surroundings } = this.options;
+    const image = await images.find(imageId);
+    if (!image) throw new NotFound('image');
+    if (edit.preparationId && (await surroundings.observationOf(edit.preparationId)) !== image.observationId) {
+      throw new Invalid([
+        { pointer: '#/preparationId', code: 'other-observation', detail: 'The preparation belongs to another observation.' },
+      ]);
+    }
+    await images.edit(imageId, edit);
+  }
+}
