@@ -15,7 +15,8 @@ const WORDS: Readonly<Record<string, Words>> = {
   unexpected: () => $localize`Something broke on our side. Try again; if it stays, tell the keeper.`,
   'internal-error': () => $localize`Something broke on our side. Try again; if it stays, tell the keeper.`,
   'too-many-requests': () => $localize`That was too often in a short time. Wait a minute and try again.`,
-  'csrf-token-invalid': () => $localize`This page has been open too long. Reload it and try again.`,
+  'too-many-tries': (f) => $localize`That was too often. Try again in ${say(f['seconds'])} seconds.`,
+  'stale-page': () => $localize`This page has been open too long. Reload it and try again.`,
   // permission
   'not-signed-in': () => $localize`Sign in to do this.`,
   forbidden: () => $localize`This is not yours to change.`,
