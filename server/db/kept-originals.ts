@@ -9,15 +9,14 @@ export interface KeptOriginal {
   readonly sha256: string;
 }
 
-/** Which originals must be there, for the check of integrity. */
+/** Which originals must be there: those of all pictures, refused ones too until they are taken out of the tray. */
 export class KeptOriginals {
   constructor(private readonly db: Database) {}
 
   async list(): Promise<KeptOriginal[]> {
     const rows = await this.db
-      .read<{ id: string; original_name: string; sha256: string; state: string }>('images')
+      .read<{ id: string; original_name: string; sha256: string }>('images')
       .select('id', 'original_name', 'sha256')
-      .whereNot('state', 'refused')
       .orderBy('id');
     return rows.map((row) => ({ imageId: row.id, name: row.original_name, sha256: row.sha256 }));
   }
