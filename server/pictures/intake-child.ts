@@ -15,7 +15,8 @@ sharp.cache(false);
 async function takeIn(task: Extract<ChildTask, { task: 'intake' }>): Promise<IntakeFacts> {
   const header = await lookAtHeader(task.source, task.maxPixels);
   const options: SharpOptions = { limitInputPixels: task.maxPixels, failOn: 'error' };
-  await decoding(() => makeAccessCopy({ source: task.source, folder: task.folder, bitDepth: header.bitDepth, options }));
+  const { upright: size, bitDepth } = header;
+  await decoding(() => makeAccessCopy({ source: task.source, folder: task.folder, size, bitDepth, options }));
   const widths = await makeRenditions(task.folder, header.upright);
   const notesFrom = header.type === 'tiff' ? task.source : header.exif;
   const notes = notesFrom === null ? null : await readCaptureNotes(notesFrom, header.stored);

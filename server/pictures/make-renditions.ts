@@ -25,10 +25,12 @@ export function renditionWidths(width: number): number[] {
 export async function makeAccessCopy(input: {
   readonly source: string;
   readonly folder: string;
+  /** of the upright picture, px */
+  readonly size: { readonly width: number; readonly height: number };
   readonly bitDepth: number;
   readonly options: SharpOptions;
 }): Promise<void> {
-  const { source, folder, bitDepth, options } = input;
+  const { source, folder, size, bitDepth, options } = input;
   const stretch = bitDepth > 8 ? await displayStretch(source, options) : null;
   let picture = sharp(source, options).autoOrient().flatten({ background: BEHIND });
   if (stretch) picture = picture.linear(stretch.gain, stretch.offset);
@@ -36,14 +38,19 @@ export async function makeAccessCopy(input: {
     .toColourspace('srgb')
     .tiff({
       tile: true,
-      tileWidth: TILE_PX,
-      tileHeight: TILE_PX,
+      tileWidth: tilePx(size),
+      tileHeight: tilePx(size),
       pyramid: true,
       compression: 'jpeg',
       quality: ACCESS_QUALITY,
       bigtiff: false,
     })
     .toFile(join(folder, ACCESS_COPY));
+}
+
+/** libvips does not read back tiles that are many times larger than their picture. */
+function tilePx({ width, height }: { readonly width: number; readonly height: number }): number {
+  return Math.max(width, height) <= 256 ? 128 : TILE_PX;
 }
 
 /**
