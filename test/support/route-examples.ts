@@ -105,8 +105,8 @@ export const EXAMPLES: Examples = {
         imageId,
         marks: [
           { at: { x: 10, y: 10 }, index: 0 },
-          { at: { x: 510, y: 11 }, index: 1 },
-          { at: { x: 1010, y: 10 }, index: 2 },
+          { at: { x: 210, y: 11 }, index: 1 },
+          { at: { x: 410, y: 10 }, index: 2 },
         ],
         spacingUm: 100,
         toleranceUm: 1,

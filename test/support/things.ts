@@ -19,6 +19,9 @@ interface Seen {
 /** A well-formed id of nothing. */
 const NOTHING = '01980000-0000-7000-8000-000000000000';
 
+/** small, for a hundred of them are made */
+const PICTURE_PX = { width: 600, height: 400 };
+
 type Owner = { readonly id: string };
 
 /** Makes one of every kind of thing in everything that matters to a permission: ownership, visibility, tray. */
@@ -69,7 +72,8 @@ export class Things {
 
   private async inTray(): Promise<NamedThing> {
     const ids = await this.ids(await this.filled(this.publicly()));
-    const imageId = await this.world.image(this.owner);
+    const imageId = await this.world.image(this.owner, PICTURE_PX);
+    await this.world.files(imageId);
     return {
       name: 'a picture in the tray',
       thing: { kind: 'image', ownerId: this.owner.id, find: null },
@@ -116,7 +120,8 @@ export class Things {
     const findId = await world.find(owner, { visibility, heldUntil });
     const observationId = await world.observation(findId, owner);
     const preparationId = await world.preparation(observationId);
-    const imageId = await world.image(owner, { observationId, preparationId });
+    const imageId = await world.image(owner, { observationId, preparationId, ...PICTURE_PX });
+    await world.files(imageId);
     await world.scale(imageId, owner, 0.25);
     const seriesId = await world.series(findId, observer, 'spore', preparationId);
     return { findId, observationId, preparationId, imageId, seriesId };

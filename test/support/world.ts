@@ -1,5 +1,9 @@
+import { mkdir } from 'node:fs/promises';
+import { dirname } from 'node:path';
 import type { Knex } from 'knex';
+import sharp from 'sharp';
 import { newId } from '../../server/ids.js';
+import { PictureFiles } from '../../server/pictures/picture-files.js';
 import type { Visibility } from '../../shared/permission/can.js';
 import type { TestApp } from './app.js';
 
@@ -28,12 +32,20 @@ export interface ImageOptions {
   readonly role?: 'subject' | 'reference';
 }
 
+interface PictureRow {
+  readonly id: string;
+  readonly revision: number;
+  readonly sha256: string;
+  readonly width: number;
+  readonly height: number;
+}
+
 /**
  * Puts things straight into the tables, without the routes: for tests that need a thing to be there and ask
  * something else. Each method answers the new thing's id.
  */
 export class World {
-  constructor(private readonly server: Pick<TestApp, 'db' | 'clock'>) {}
+  constructor(private readonly server: Pick<TestApp, 'db' | 'clock' | 'config'>) {}
 
   async find(owner: Owner, options: FindOptions = {}): Promise<string> {
     return this.insert('finds', {
@@ -93,6 +105,20 @@ export class World {
       rendition_widths: '[400]',
       uploaded_at: this.now(),
     });
+  }
+
+  /** Puts the picture's original and access copy into the data folder: plain, but of the right size. */
+  async files(imageId: string): Promise<void> {
+    const row = (await this.knex('images').where({ id: imageId }).first()) as PictureRow;
+    const files = new PictureFiles(this.server.config.dataDir);
+    const original = files.original(row.sha256);
+    await mkdir(dirname(original), { recursive: true });
+    const plain = sharp({ create: { width: row.width, height: row.height, channels: 3, background: '#6b5a3c' } });
+    await plain.clone().jpeg().toFile(original);
+    await mkdir(files.made(row), { recursive: true });
+    await plain
+      .tiff({ tile: true, tileWidth: 512, tileHeight: 512, pyramid: true, compression: 'jpeg' })
+      .toFile(files.accessCopy(row));
   }
 
   async scale(imageId: string, setter: Owner, umPerPx: number): Promise<string> {
