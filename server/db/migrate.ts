@@ -2,13 +2,14 @@ import { readdirSync } from 'node:fs';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { join } from 'node:path';
 import knexFactory, { type Knex } from 'knex';
+import { putTriggersOn, takeTriggersOff } from './triggers.js';
 
 const FOLDER = fileURLToPath(new URL('../../migrations', import.meta.url));
 
 /**
  * Brings the database up to date, on a connection of its own with foreign keys off: Knex rebuilds a table
  * to alter it, and with foreign keys on that deletes cascade children. Each migration is a transaction
- * that ends in a foreign-key check.
+ * that ends in a foreign-key check. Triggers are off meanwhile; see `triggers.ts`.
  */
 export async function migrate(filename: string, folder = FOLDER): Promise<void> {
   const knex = knexFactory({
@@ -26,7 +27,11 @@ export async function migrate(filename: string, folder = FOLDER): Promise<void> 
     },
   });
   try {
-    await knex.migrate.latest({ migrationSource: new MigrationFolder(folder) });
+    const migrationSource = new MigrationFolder(folder);
+    const [, waiting] = (await knex.migrate.list({ migrationSource })) as [unknown[], unknown[]];
+    if (waiting.length > 0) await takeTriggersOff(knex);
+    await knex.migrate.latest({ migrationSource });
+    await putTriggersOn(knex);
   } finally {
     await knex.destroy();
   }
