@@ -118,7 +118,6 @@ export function createApp(options: AppOptions): App {
     ...(forTests && { pause: () => Promise.resolve() }),
   });
   const keep = new KeepService({ db, users, invitations, mails, jobTable, runner: jobs, clock });
-  const integrity = new IntegrityService(new KeptOriginals(db), config.dataDir, clock);
 
   const measurements = new MeasurementService(new MeasurementTable(), clock);
   const images = new ImageTable(db);
@@ -137,6 +136,7 @@ export function createApp(options: AppOptions): App {
     ...{ config, db, clock, log, images, imageScales, users, jobTable, scales, nudge: () => jobs.nudge() },
     ...(options.intakeLimits && { intakeLimits: options.intakeLimits }),
   });
+  const integrity = new IntegrityService(new KeptOriginals(db), pictureRooms.files, clock);
 
   const app = express();
   app.disable('x-powered-by');

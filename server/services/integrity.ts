@@ -1,16 +1,16 @@
 import { createHash } from 'node:crypto';
 import { createReadStream } from 'node:fs';
-import { join } from 'node:path';
 import { pipeline } from 'node:stream/promises';
 import type { IntegrityView } from '../../shared/contracts/keep.js';
 import { type Clock, instant } from '../clock.js';
 import type { KeptOriginals } from '../db/kept-originals.js';
+import type { PictureFiles } from '../pictures/picture-files.js';
 
 /** Whether every original is still there, byte for byte. */
 export class IntegrityService {
   constructor(
     private readonly originals: Pick<KeptOriginals, 'list'>,
-    private readonly dataDir: string,
+    private readonly files: Pick<PictureFiles, 'original'>,
     private readonly clock: Clock,
   ) {}
 
@@ -19,7 +19,7 @@ export class IntegrityService {
     const pictures = await this.originals.list();
     const states = new Map<string, { bytes: number; fault: 'missing' | 'changed' | null }>();
     for (const { sha256 } of pictures) {
-      if (!states.has(sha256)) states.set(sha256, await examine(originalPath(this.dataDir, sha256), sha256));
+      if (!states.has(sha256)) states.set(sha256, await examine(this.files.original(sha256), sha256));
     }
     return {
       checkedAt: instant(this.clock),
@@ -31,11 +31,6 @@ export class IntegrityService {
       }),
     };
   }
-}
-
-/** Originals are named by their content, so that the same bytes are kept once. */
-function originalPath(dataDir: string, sha256: string): string {
-  return join(dataDir, 'originals', sha256.slice(0, 2), sha256);
 }
 
 async function examine(path: string, sha256: string): Promise<{ bytes: number; fault: 'missing' | 'changed' | null }> {
