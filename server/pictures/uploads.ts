@@ -26,6 +26,16 @@ interface UploadNotes {
 }
 
 /**
+ * The library makes its folder in the constructor without anybody waiting for it, and ends the process when that
+ * fails, as it does where the data folder is gone by then. `PictureFiles` has made the folder.
+ */
+class UploadStore extends FileStore {
+  override checkOrCreateDirectory(): void {
+    // nothing to do
+  }
+}
+
+/**
  * Resumable uploads by the tus protocol. An upload's id becomes its picture's id. Whenever all bytes are
  * there the picture is brought in, be it at the last request, when the client asks how far it came, or at the
  * next start: a client that is told that everything arrived can rely on it.
@@ -50,7 +60,7 @@ export class Uploads {
       relativeLocation: true,
       allowedOrigins: () => false, // our own pages alone
       maxSize: maxBytes,
-      datastore: new FileStore({ directory: files.uploads, expirationPeriodInMilliseconds: KEEP_UNFINISHED_MS }),
+      datastore: new UploadStore({ directory: files.uploads, expirationPeriodInMilliseconds: KEEP_UNFINISHED_MS }),
       namingFunction: () => newId(),
       onUploadCreate: (req, upload) => {
         const { user } = req.runtime?.node?.req as IncomingMessage & { user?: Express.User };
