@@ -29,11 +29,8 @@ interface UploadNotes {
  * The library makes its folder in the constructor without anybody waiting for it, and ends the process when that
  * fails, as it does where the data folder is gone by then. `PictureFiles` has made the folder.
  */
-class UploadStore extends FileStore {
-  override checkOrCreateDirectory(): void {
-    // nothing to do
-  }
-}
+class UploadStore extends FileStore {}
+UploadStore.prototype['checkOrCreateDirectory'] = () => undefined; // private to the library's types, hence so
 
 /**
  * Resumable uploads by the tus protocol. An upload's id becomes its picture's id. Whenever all bytes are
