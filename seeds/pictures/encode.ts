@@ -51,7 +51,6 @@ export async function writeGreyTiff(file: string, pixels: Uint16Array, width: nu
     .toFile(renderedPath(file));
 }
 
-
 function exif(notes: CameraNotes, width: number): Exif {
   const photo: Record<string, string> = {
     DateTimeOriginal: notes.taken,

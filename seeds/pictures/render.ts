@@ -33,5 +33,5 @@ for (const name of names.length ? names : Object.keys(PICTURES)) {
   if (!render) throw new Error(`No picture “${name}”. There are: ${Object.keys(PICTURES).join(', ')}.`);
   const started = Date.now();
   await render();
-  console.log(`${name}: ${((Date.now() - started) / 1000).toFixed(0)} s`);
+  process.stdout.write(`${name}: ${((Date.now() - started) / 1000).toFixed(0)} s\n`);
 }

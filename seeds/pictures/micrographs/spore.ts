@@ -25,7 +25,12 @@ export interface SporeLook {
   readonly wall: { readonly thickness: number; readonly index: number; readonly pigment: number };
   /** Index is the difference to the mounting medium; pigment is absorbance per µm. */
   readonly contents: { readonly index: number; readonly pigment: number; readonly grain: number };
-  readonly warts?: { readonly spacing: number; readonly radius: number; readonly path: number; readonly pigment: number };
+  readonly warts?: {
+    readonly spacing: number;
+    readonly radius: number;
+    readonly path: number;
+    readonly pigment: number;
+  };
   readonly drops?: { readonly most: number; readonly index: number };
   /** The small peg by which a basidiospore was attached. */
   readonly apiculus?: { readonly length: number; readonly radius: number };

@@ -5,13 +5,14 @@
  */
 import { writeGreyTiff } from '../encode.js';
 import { Random } from '../random.js';
-import { writeTruth, type TrueBody } from '../truth.js';
+import { writeTruth } from '../truth.js';
 import { BENCH } from './bench.js';
 import { crop, monochrome, type Frame } from './camera.js';
 import { layMottle, laySpecks } from './litter.js';
 import { formImage } from './optics.js';
-import { settle, type Settled } from './scatter.js';
+import { settle } from './scatter.js';
 import { Specimen } from './specimen.js';
+import { sporeBodies } from './spore-truth.js';
 import { laySpore, type SporeLook } from './spore.js';
 
 const SEED = 264;
@@ -64,38 +65,5 @@ export async function renderSporesClavata(directions = 40): Promise<void> {
     preparation: 'Water mount, bright field, green filter, 12 bits a pixel',
     seed: SEED,
     bodies: sporeBodies(spores, FRAME, BENCH.umPerPx),
-  });
-}
-
-/** Spores that show in the frame, as truth; those that touch the border are marked as cut. */
-export function sporeBodies(spores: readonly Settled[], frame: Frame, umPerPx: number): TrueBody[] {
-  const id = (index: number): string => `s${index + 1}`;
-  const place = spores.map((spore) => {
-    const reach = spore.length / 2 / umPerPx;
-    const x = spore.x - frame.left;
-    const y = spore.y - frame.top;
-    const shows = x > -reach && y > -reach && x < frame.width + reach && y < frame.height + reach;
-    const whole = x > reach && y > reach && x < frame.width - reach && y < frame.height - reach;
-    return { x, y, shows, whole };
-  });
-  return spores.flatMap((spore, i): TrueBody[] => {
-    const { x, y, shows, whole } = place[i]!;
-    if (!shows) return [];
-    const near = spore.touching.filter((other) => place[other]!.shows);
-    const covers = near.filter((other) => spores[other]!.height - spore.height > 1.5);
-    return [
-      {
-        id: id(i),
-        kind: 'spore',
-        center: { x, y },
-        axesUm: { length: spore.length, width: spore.width },
-        angle: spore.angle % 180,
-        focus: spore.height,
-        ...(near.length ? { touching: near.map(id) } : {}),
-        ...(covers.length ? { coveredBy: covers.map(id) } : {}),
-        ...(whole ? {} : { cut: true }),
-        edgeRule: 'outer flank of the wall where it is half as dark as the wall, ornament left out',
-      },
-    ];
   });
 }

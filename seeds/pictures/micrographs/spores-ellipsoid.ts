@@ -13,7 +13,7 @@ import { formImage } from './optics.js';
 import { settle } from './scatter.js';
 import { Specimen } from './specimen.js';
 import { laySpore, type SporeLook } from './spore.js';
-import { sporeBodies } from './spores-clavata.js';
+import { sporeBodies } from './spore-truth.js';
 
 const SEED = 1973;
 const UM_PER_PX = 0.1102;

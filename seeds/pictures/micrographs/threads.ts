@@ -14,7 +14,7 @@ import { formImage } from './optics.js';
 import { settle } from './scatter.js';
 import { Specimen } from './specimen.js';
 import { laySpore } from './spore.js';
-import { sporeBodies } from './spores-clavata.js';
+import { sporeBodies } from './spore-truth.js';
 
 const SEED = 272;
 const UM_PER_PX = 0.1464;
@@ -25,14 +25,14 @@ const TINT = [1, 0.66, 0.2] as const;
 
 export async function renderThreads(directions = 28): Promise<void> {
   const random = new Random(SEED);
-  const specimen = new Specimen(2048, UM_PER_PX, [-7, -4.5, -2.2, 0, 2.2, 4.5, 7]);
+  const specimen = new Specimen(2048, UM_PER_PX, [-5, -2.2, 0, 2.2, 5]);
   const elaters = Array.from({ length: 11 }, (_, i) => grow(random, i));
   for (const elater of elaters) layElater(specimen, elater);
   const spores = settle(random, {
     count: 9,
     sociable: 0.3,
     afloat: 0.25,
-    floatHeights: [-5.5, 5.5],
+    floatHeights: [-4.8, 4.8],
     unevenness: 0.3,
     area: { left: 260, top: 470, width: 1500, height: 1100 },
     umPerPx: UM_PER_PX,
@@ -52,12 +52,11 @@ export async function renderThreads(directions = 28): Promise<void> {
   laySpecks(specimen, random, 60, 0.8);
   const microscope = { aperture: 0.72, condenser: { inner: 0.76, outer: 0.98 }, medium: 1.34, directions };
   const channels = [0.61, 0.54, 0.47].map((wavelength, c) => {
-    const light = crop(
-      formImage(specimen, microscope, { wavelength, pigment: 1 }, 0),
-      2048,
-      FRAME,
-      { x: 0.5, y: 0.47, fall: 0.2 },
-    );
+    const light = crop(formImage(specimen, microscope, { wavelength, pigment: 1 }, 0), 2048, FRAME, {
+      x: 0.5,
+      y: 0.47,
+      fall: 0.2,
+    });
     return light.map((value) => 0.0035 + 0.004 * TINT[c]! + exposed(value) * TINT[c]!);
   });
   const pixels = colour([channels[0]!, channels[1]!, channels[2]!], [1, 1, 1], SEED, 0.016);

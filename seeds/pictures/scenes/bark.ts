@@ -58,7 +58,13 @@ export function barkColour(noise: Noise, lichen: number, green: number): Materia
     s.r += (0.042 - s.r) * algae;
     s.g += (0.07 - s.g) * algae;
     s.b += (0.016 - s.b) * algae;
-    bend(s, at, 0.012, (px, py) => 0.016 * noise.fractal(px * 18, py * 26, 9.1 + z * 0.1, 2) + crust * 0.014 * noise.at(px * 11, py * 11, 6.6));
+    bend(
+      s,
+      at,
+      0.012,
+      (px, py) =>
+        0.016 * noise.fractal(px * 18, py * 26, 9.1 + z * 0.1, 2) + crust * 0.014 * noise.at(px * 11, py * 11, 6.6),
+    );
   };
 }
 

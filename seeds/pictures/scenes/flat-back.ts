@@ -4,7 +4,8 @@
  */
 import type { Random } from '../random.js';
 import type { Noise } from '../tracer/noise.js';
-import { ellipsoid, type Solids } from '../tracer/solids.js';
+import { ellipsoid } from '../tracer/ellipsoid.js';
+import type { Solids } from '../tracer/solids.js';
 import { add, times, unit, vec, type Vector } from '../tracer/vector.js';
 import { smooth } from './bark.js';
 
@@ -55,14 +56,23 @@ export function layFlatBack(
     layFlank(solids, line, end, pitch, WIDTHS[k]! * broad);
     const pairs = k < 1 || k > 18 ? 0 : k < 4 ? 1 : 2;
     for (let pair = 0; pair < pairs; pair++) {
-      for (const hand of [-1, 1]) layLeg(solids, random, line, end + pitch * (0.25 + 0.45 * pair), width, hand, ground, k * 2 + pair);
+      for (const hand of [-1, 1])
+        layLeg(solids, random, line, end + pitch * (0.25 + 0.45 * pair), width, hand, ground, k * 2 + pair);
     }
   }
   layFront(solids, line, pitch, broad, ground);
   return rings.reverse();
 }
 
-function layBack(solids: Solids, noise: Noise, line: BodyLine, end: number, pitch: number, width: number, k: number): void {
+function layBack(
+  solids: Solids,
+  noise: Noise,
+  line: BodyLine,
+  end: number,
+  pitch: number,
+  width: number,
+  k: number,
+): void {
   const telson = k === RINGS - 1;
   const collum = k === 0;
   solids.sheet(
@@ -74,9 +84,9 @@ function layBack(solids: Solids, noise: Noise, line: BodyLine, end: number, pitc
       const hand = u < 0.5 ? -1 : 1;
       const top = Math.min(1, a);
       const under = Math.max(0, a - 1) / 0.18;
-      const corner = smooth(0.3, 0, v);
+      const corner = smooth(0.36, 0, v);
       const teeth = 0.022 * Math.cos(v * 6.283 * 3) * smooth(0.85, 1, top);
-      let half = (width / 2) * (1 - 0.2 * corner * corner + teeth);
+      let half = (width / 2) * (1 - 0.3 * corner * corner + teeth);
       if (telson) half *= 1 - 0.86 * v ** 0.9;
       if (collum) half *= 1 - 0.22 * Math.abs(v - 0.5) ** 2 * 4;
       const across = hand * half * (top - 0.3 * under);
@@ -86,12 +96,14 @@ function layBack(solids: Solids, noise: Noise, line: BodyLine, end: number, pitc
       const furrow = 0.035 * Math.exp(-((top / 0.035) ** 2));
       const lip = smooth(0.88, 1, v) * 0.05;
       const front = smooth(0.2, 0, v) * 0.09;
-      const grain = 0.006 * noise.at(across * 9, (end + v) * 9, k);
+      const grain =
+        0.014 * noise.fractal(across * 3, (end + v) * 3, k + 0.5, 2) + 0.005 * noise.at(across * 9, (end + v) * 9, k);
       const hind = (k > 16 ? 0.12 : 0.28) * smooth(0.7, 1, top) * v * v; // hind corners drawn out backwards
       const s = end + pitch * (1.06 * (1 - v) - hind);
       const { place, forward } = line.at(s);
       const side = vec(-forward.y, forward.x, 0);
-      const z = dome + bosses - furrow - lip - front + grain - 0.085 * Math.min(1, under * 2.2) - (telson ? 0.25 * v * v : 0);
+      const z =
+        dome + bosses - furrow - lip - front + grain - 0.085 * Math.min(1, under * 2.2) - (telson ? 0.25 * v * v : 0);
       return add(add(place, times(side, across)), vec(0, 0, z));
     },
     FLAT_BACK.back,
@@ -99,16 +111,19 @@ function layBack(solids: Solids, noise: Noise, line: BodyLine, end: number, pitc
   );
 }
 
-/** Three rows of flat-topped bosses, four to six a side, with furrows between. */
+/** Three rows of pillow-like bosses, three to six a side, each row shifted against the next, with furrows between. */
 export function bossHeight(top: number, v: number): number {
-  if (v < 0.16) return 0;
-  const row = Math.min(2, Math.floor((v - 0.16) / 0.28));
-  const inRow = (v - 0.16) / 0.28 - row;
-  const count = [3.2, 4.2, 5.2][row]!;
-  const column = (top * count) % 1;
-  const pillow = (1 - Math.abs(2 * inRow - 1) ** 3) * (1 - Math.abs(2 * column - 1) ** 3);
-  return 0.075 * Math.max(0, pillow) ** 0.7;
+  if (v < 0.14) return 0;
+  const rows = (v - 0.14) / 0.285;
+  const row = Math.max(0, Math.min(2, Math.floor(rows + 0.06 * Math.sin(top * 9))));
+  const inRow = Math.min(1, Math.max(0, rows - row));
+  const column = (top ** 0.9 * [2.6, 3.7, 4.9][row]! + 0.5 * (row % 2)) % 1;
+  const pillow =
+    Math.sqrt(Math.max(0, 1 - Math.abs(2 * inRow - 1) ** 2.4)) * Math.sqrt(1 - Math.abs(2 * column - 1) ** 2.4);
+  return BOSS * pillow;
 }
+
+export const BOSS = 0.062;
 
 function layFlank(solids: Solids, line: BodyLine, end: number, pitch: number, width: number): void {
   const r = 0.235 * width;
@@ -121,8 +136,14 @@ function layFlank(solids: Solids, line: BodyLine, end: number, pitch: number, wi
 }
 
 function layLeg(
-  solids: Solids, random: Random, line: BodyLine, s: number, width: number, hand: number,
-  ground: (x: number, y: number) => number, order: number,
+  solids: Solids,
+  random: Random,
+  line: BodyLine,
+  s: number,
+  width: number,
+  hand: number,
+  ground: (x: number, y: number) => number,
+  order: number,
 ): void {
   const { place, forward } = line.at(s);
   const side = vec(-forward.y * hand, forward.x * hand, 0);
@@ -130,14 +151,20 @@ function layLeg(
   const at = (out: number, ahead: number, z: number): Vector =>
     add(add(place, add(times(side, out * width), times(forward, ahead))), vec(0, 0, z));
   const hip = at(0.1, 0, -0.52);
-  const knee = at(0.42, swing * 0.45, -0.3);
-  const shin = at(0.58, swing * 0.8, -0.42 + 0.03 * random.normal());
-  const toe = at(0.68, swing, 0);
+  const knee = at(0.44, swing * 0.45, -0.24);
+  const shin = at(0.6, swing * 0.8, -0.42 + 0.03 * random.normal());
+  const toe = at(0.76, swing, 0);
   const foot = vec(toe.x, toe.y, Math.min(shin.z - 0.1, ground(toe.x, toe.y) + 0.02));
-  solids.chain([hip, knee, shin, foot], [0.09, 0.082, 0.06, 0.022], FLAT_BACK.leg, random.next());
+  solids.chain([hip, knee, shin, foot], [0.085, 0.075, 0.055, 0.018], FLAT_BACK.leg, random.next());
 }
 
-function layFront(solids: Solids, line: BodyLine, pitch: number, broad: number, ground: (x: number, y: number) => number): void {
+function layFront(
+  solids: Solids,
+  line: BodyLine,
+  pitch: number,
+  broad: number,
+  ground: (x: number, y: number) => number,
+): void {
   const { place, forward } = line.at(RINGS * pitch);
   const side = vec(-forward.y, forward.x, 0);
   const head = add(place, add(times(forward, 0.2), vec(0, 0, -0.22)));

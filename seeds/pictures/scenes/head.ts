@@ -37,7 +37,9 @@ export function layHead(solids: Solids, noise: Noise, random: Random, head: Head
     head.burst ? 64 : 56,
     40,
     (u, v) => {
-      const ragged = head.burst ? open * (1 + 0.16 * noise.at(Math.cos(6.283 * u) * 3, Math.sin(6.283 * u) * 3, seed)) : 1;
+      const ragged = head.burst
+        ? open * (1 + 0.16 * noise.at(Math.cos(6.283 * u) * 3, Math.sin(6.283 * u) * 3, seed))
+        : 1;
       const t = v * ragged;
       const round = 2 * Math.PI * u;
       const c = Math.cos(round);
@@ -95,6 +97,11 @@ function layWool(solids: Solids, random: Random, middle: Vector, axis: Vector, w
       p = add(p, times(d, 0.07));
       points.push(p);
     }
-    solids.chain(points, points.map(() => 0.0036), HEAD_MATERIALS.wool, random.next());
+    solids.chain(
+      points,
+      points.map(() => 0.0036),
+      HEAD_MATERIALS.wool,
+      random.next(),
+    );
   }
 }

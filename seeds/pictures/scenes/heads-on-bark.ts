@@ -65,7 +65,12 @@ export async function renderHeadsOnBark(rays = 14, width = 1600): Promise<void> 
   };
   const light = denoise(expose(scene, rays, SEED), 0.75);
   const pixels = develop(light, width, height, {
-    exposure: 1.4, saturation: 1.05, grain: 0.01, vignette: 0.22, glow: 0.05, seed: SEED,
+    exposure: 1.4,
+    saturation: 1.05,
+    grain: 0.01,
+    vignette: 0.22,
+    glow: 0.05,
+    seed: SEED,
   });
   await writeJpeg('heads-on-bark.jpg', pixels, width, height, { ...FIELD_CAMERA, taken: '2025:11:03 10:42:00' });
   await writeTruth('heads-on-bark.jpg', {
@@ -124,7 +129,8 @@ const scaled = (v: Vector, s: number): Vector => vec(v.x * s, v.y * s, v.z * s);
 function closest(a: { base: Vector; tip: Vector }, b: { base: Vector; tip: Vector }): number {
   let least = Infinity;
   const at = (h: { base: Vector; tip: Vector }, t: number): Vector => add(h.base, scaled(sub(h.tip, h.base), t));
-  for (const s of [0.5, 0.65, 0.8, 0.95]) for (const t of [0.5, 0.65, 0.8, 0.95]) least = Math.min(least, length(sub(at(a, s), at(b, t))));
+  for (const s of [0.5, 0.65, 0.8, 0.95])
+    for (const t of [0.5, 0.65, 0.8, 0.95]) least = Math.min(least, length(sub(at(a, s), at(b, t))));
   return least;
 }
 
@@ -141,7 +147,8 @@ function materials(noise: Noise): Material[] {
   };
   const wall: Material = (at, s) => {
     const ripe = 0.75 * at.shade + 0.3 * noise.at(at.x * 3, at.y * 3, at.z * 3);
-    const speck = 1 + 0.16 * noise.at(at.x * 34, at.y * 34, at.z * 34) + 0.1 * noise.at(at.x * 90, at.y * 90, at.z * 90);
+    const speck =
+      1 + 0.16 * noise.at(at.x * 34, at.y * 34, at.z * 34) + 0.1 * noise.at(at.x * 90, at.y * 90, at.z * 90);
     const foot = smooth(0.42, 0, at.v);
     s.r = (0.76 - 0.36 * ripe) * speck * (1 - 0.35 * foot);
     s.g = (0.47 - 0.27 * ripe) * speck * (1 - 0.55 * foot);
@@ -149,7 +156,12 @@ function materials(noise: Noise): Material[] {
     s.gloss = 0.06;
     s.rough = 0.27 + 0.12 * noise.at(at.x * 6, at.y * 6, at.z * 6);
     s.through = 0.3;
-    bend(s, at, 0.004, (x, y, z) => 0.0055 * noise.at(x * 38, y * 38, z * 38) + 0.0018 * noise.at(x * 110, y * 110, z * 110));
+    bend(
+      s,
+      at,
+      0.004,
+      (x, y, z) => 0.0055 * noise.at(x * 38, y * 38, z * 38) + 0.0018 * noise.at(x * 110, y * 110, z * 110),
+    );
   };
   const wool: Material = (at, s) => {
     const f = 0.75 + 0.5 * at.shade;
@@ -189,7 +201,9 @@ function headBodies(heads: readonly Head[], camera: Camera): TrueBody[] {
       angle: (Math.atan2(base.y - tip.y, base.x - tip.x) * 180) / Math.PI,
       focus: middle.before * 1000,
       ...(cut ? { cut } : {}),
-      edgeRule: head.burst ? 'before it burst: base of the stalk to tip; wool swells over it' : 'base of the stalk to tip; broadest place of the wall',
+      edgeRule: head.burst
+        ? 'before it burst: base of the stalk to tip; wool swells over it'
+        : 'base of the stalk to tip; broadest place of the wall',
       points: { base: { x: base.x, y: base.y }, tip: { x: tip.x, y: tip.y } },
     };
   });

@@ -17,7 +17,7 @@ import { add, times, unit, vec, type Vector } from '../tracer/vector.js';
 import { writeTruth, type TrueBody } from '../truth.js';
 import { bark, smooth } from './bark.js';
 import { FIELD_CAMERA } from './field-camera.js';
-import { bossHeight, layFlatBack, type BodyLine, type Ring } from './flat-back.js';
+import { BOSS, bossHeight, layFlatBack, type BodyLine, type Ring } from './flat-back.js';
 import { layMoss } from './moss.js';
 
 const SEED = 365;
@@ -68,10 +68,18 @@ export async function renderMillipedeUv(rays = 14, width = 1600): Promise<void> 
   };
   const light = denoise(expose(scene, rays, SEED), 0.75);
   const pixels = develop(light, width, height, {
-    exposure: 1.15, saturation: 1.1, grain: 0.016, vignette: 0.4, glow: 0.1, seed: SEED,
+    exposure: 1.5,
+    saturation: 1.12,
+    grain: 0.016,
+    vignette: 0.4,
+    glow: 0.1,
+    seed: SEED,
   });
   await writeJpeg('millipede-uv.jpg', pixels, width, height, {
-    ...FIELD_CAMERA, taken: '2025:11:04 18:26:00', exposure: '1/4', iso: 800,
+    ...FIELD_CAMERA,
+    taken: '2025:11:04 18:26:00',
+    exposure: '1/4',
+    iso: 800,
   });
   await writeTruth('millipede-uv.jpg', {
     width,
@@ -106,7 +114,7 @@ function bodyLine(ground: (x: number, y: number) => number): BodyLine {
   const below = moved.map((p) => Math.max(...[-0.9, 0, 0.9].map((d) => ground(p.x, p.y + d))));
   const level = below.map((_, i) => {
     const near = below.slice(Math.max(0, i - 45), i + 46);
-    return near.reduce((a, b) => a + b, 0) / near.length + 0.86;
+    return near.reduce((a, b) => a + b, 0) / near.length + 0.74;
   });
   return {
     length: LENGTH,
@@ -119,7 +127,10 @@ function bodyLine(ground: (x: number, y: number) => number): BodyLine {
       const z = level[i]! * (1 - t) + level[i + 1]! * t;
       const back = s < 0 ? s : 0; // the telson's point may reach a little further
       const forward = unit(vec(q.x - p.x, q.y - p.y, 0));
-      return { place: vec(p.x + (q.x - p.x) * t + forward.x * back, p.y + (q.y - p.y) * t + forward.y * back, z), forward };
+      return {
+        place: vec(p.x + (q.x - p.x) * t + forward.x * back, p.y + (q.y - p.y) * t + forward.y * back, z),
+        forward,
+      };
     },
   };
 }
@@ -140,7 +151,12 @@ function layLint(solids: Solids, random: Random, ground: (x: number, y: number) 
       x += 0.11 * Math.cos(turn);
       y += 0.11 * Math.sin(turn);
     }
-    solids.chain(points, points.map(() => 0.009), LINT, random.next());
+    solids.chain(
+      points,
+      points.map(() => 0.009),
+      LINT,
+      random.next(),
+    );
   }
 }
 
@@ -170,20 +186,23 @@ function barkUnderTorch(noise: Noise): Material {
 function materials(noise: Noise): Material[] {
   const glow = (s: Parameters<Material>[1], f: number, blue: number): void => {
     s.r = 0.035 * f + 0.1 * blue;
-    s.g = 0.62 * f;
-    s.b = (0.56 + 0.2 * blue) * f;
+    f = Math.max(0.06, f);
+    s.g = 0.6 * f;
+    s.b = (0.53 + 0.2 * blue) * f;
     s.er = 0.004 * f;
     s.eg = 0.022 * f;
     s.eb = 0.021 * f;
-    s.through = 0.25;
+    s.through = 0.12;
   };
   const back: Material = (at, s) => {
     const head = at.shade < 0;
     const edge = head ? 0.2 : smooth(0.62, 0.84, Math.abs(at.u * 2 - 1));
     const rear = head ? 0 : smooth(0.86, 0.98, at.v);
-    const mottle = noise.fractal(at.x * 2.2, at.y * 2.2, at.z * 2.2, 3) + 0.35 * noise.at(at.x * 15, at.y * 15, at.z * 15);
-    const boss = head ? 0.4 : bossHeight(Math.min(1, Math.abs(at.u * 2 - 1) * 1.18), at.v) / 0.075;
-    glow(s, 0.34 + 0.3 * boss + 0.42 * edge + 0.3 * rear + 0.4 * mottle, 0.3 * edge);
+    const mottle =
+      noise.fractal(at.x * 2.2, at.y * 2.2, at.z * 2.2, 3) + 0.35 * noise.at(at.x * 15, at.y * 15, at.z * 15);
+    const boss = head ? 0.4 : bossHeight(Math.min(1, Math.abs(at.u * 2 - 1) * 1.18), at.v) / BOSS;
+    const young = 0.85 + 0.3 * noise.at(at.shade * 9, 3.3, 0.5); // no two rings glow alike
+    glow(s, young * (0.2 + 0.3 * boss + 0.5 * edge + 0.3 * rear + 0.55 * mottle), 0.3 * edge);
     s.gloss = 0.03;
     s.rough = 0.36;
     bend(s, at, 0.008, (x, y, z) => 0.004 * noise.at(x * 24, y * 24, z * 24));

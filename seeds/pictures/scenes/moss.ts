@@ -19,10 +19,23 @@ export function layMoss(solids: Solids, random: Random, base: Vector, tall: numb
     const size = (k > whorls - 4 ? 0.6 : 1) * random.between(0.5, 0.75);
     layLeaf(solids, p, d, out, size, material, random.next());
   }
-  solids.chain(stem, stem.map(() => 0.035), material, 0.1);
+  solids.chain(
+    stem,
+    stem.map(() => 0.035),
+    material,
+    0.1,
+  );
 }
 
-function layLeaf(solids: Solids, at: Vector, up: Vector, out: Vector, size: number, material: number, shade: number): void {
+function layLeaf(
+  solids: Solids,
+  at: Vector,
+  up: Vector,
+  out: Vector,
+  size: number,
+  material: number,
+  shade: number,
+): void {
   const across = cross(up, out);
   solids.sheet(
     4,

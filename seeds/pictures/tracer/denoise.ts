@@ -54,8 +54,14 @@ function noise(a: Float32Array, b: Float32Array, width: number, height: number):
 }
 
 function compare(
-  guide: Float32Array, variance: Float32Array, width: number, height: number,
-  dx: number, dy: number, strength: number, out: Float32Array,
+  guide: Float32Array,
+  variance: Float32Array,
+  width: number,
+  height: number,
+  dx: number,
+  dy: number,
+  strength: number,
+  out: Float32Array,
 ): void {
   const k2 = strength * strength;
   for (let y = 0; y < height; y++) {
@@ -75,8 +81,14 @@ function compare(
 }
 
 function gather(
-  source: Float32Array, unlike: Float32Array, width: number, height: number,
-  dx: number, dy: number, sums: Float32Array, weights: Float32Array,
+  source: Float32Array,
+  unlike: Float32Array,
+  width: number,
+  height: number,
+  dx: number,
+  dy: number,
+  sums: Float32Array,
+  weights: Float32Array,
 ): void {
   for (let y = Math.max(0, -dy); y < Math.min(height, height - dy); y++) {
     for (let x = Math.max(0, -dx); x < Math.min(width, width - dx); x++) {

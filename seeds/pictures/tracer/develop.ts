@@ -15,12 +15,16 @@ export interface Development {
 export function develop(light: Float32Array, width: number, height: number, how: Development): Uint8Array {
   const random = new Random(how.seed);
   const halo = how.glow > 0 ? haloOf(light, width, height) : null;
-  const grain = soften(Float32Array.from({ length: width * height }, () => random.normal()), width, height);
+  const grain = soften(
+    Float32Array.from({ length: width * height }, () => random.normal()),
+    width,
+    height,
+  );
   const out = new Uint8Array(width * height * 3);
   for (let y = 0; y < height; y++) {
     for (let x = 0; x < width; x++) {
       const i = y * width + x;
-      const d2 = ((x / width - 0.5) ** 2 + ((y / height - 0.5) ** 2 * (height / width) ** 2)) * 4;
+      const d2 = ((x / width - 0.5) ** 2 + (y / height - 0.5) ** 2 * (height / width) ** 2) * 4;
       const gain = how.exposure * (1 - how.vignette * d2);
       const rgb = [0, 1, 2].map((c) => {
         const v = light[i * 3 + c]!;
@@ -62,7 +66,10 @@ function haloOf(light: Float32Array, width: number, height: number): Float32Arra
   let from = light.map((v) => Math.min(v, 4));
   const r = Math.round(width / 90);
   for (let pass = 0; pass < 3; pass++) {
-    for (const [step, n, lines, jump] of [[3, width, height, width * 3], [width * 3, height, width, 3]] as const) {
+    for (const [step, n, lines, jump] of [
+      [3, width, height, width * 3],
+      [width * 3, height, width, 3],
+    ] as const) {
       const to = new Float32Array(from.length);
       for (let l = 0; l < lines; l++) {
         for (let c = 0; c < 3; c++) {

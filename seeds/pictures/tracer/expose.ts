@@ -34,6 +34,7 @@ export function expose(scene: Scene, rays: number, seed: number, limit = 6): Exp
           one.fill(0);
           tracer.path(ray, one);
           const most = Math.max(one[0]!, one[1]!, one[2]!);
+          if (!(most >= 0)) throw new Error(`A path at (${x}, ${y}) has no brightness.`);
           const scale = (most > limit ? limit / most : 1) / rays;
           const o = (y * width + x) * 3;
           half[o] = half[o]! + one[0]! * scale;
@@ -42,7 +43,8 @@ export function expose(scene: Scene, rays: number, seed: number, limit = 6): Exp
         }
       }
     }
-    if (process.env['PROGRESS'] && y % 100 === 99) console.log(`row ${y + 1}: ${Math.round((Date.now() - started) / 1000)} s`);
+    if (process.env['PROGRESS'] && y % 100 === 99)
+      process.stdout.write(`row ${y + 1}: ${Math.round((Date.now() - started) / 1000)} s\n`);
   }
   return { width, height, halves };
 }

@@ -51,7 +51,9 @@ export class Ground {
     const v = gy - j;
     const o = j * this.columns + i;
     const h = this.heights;
-    return (h[o]! * (1 - u) + h[o + 1]! * u) * (1 - v) + (h[o + this.columns]! * (1 - u) + h[o + this.columns + 1]! * u) * v;
+    return (
+      (h[o]! * (1 - u) + h[o + 1]! * u) * (1 - v) + (h[o + this.columns]! * (1 - u) + h[o + this.columns + 1]! * u) * v
+    );
   }
 
   meet(ox: number, oy: number, oz: number, dx: number, dy: number, dz: number, hit: Hit): boolean {
@@ -93,7 +95,15 @@ export class Ground {
   }
 
   private march(
-    ox: number, oy: number, oz: number, dx: number, dy: number, dz: number, from: number, to: number, hit: Hit,
+    ox: number,
+    oy: number,
+    oz: number,
+    dx: number,
+    dy: number,
+    dz: number,
+    from: number,
+    to: number,
+    hit: Hit,
   ): boolean {
     const flat = Math.sqrt(dx * dx + dy * dy);
     const pace = this.step / Math.max(flat, 0.3);

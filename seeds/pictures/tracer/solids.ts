@@ -2,7 +2,7 @@
  * Solids of a scene, packed into flat arrays: round cones (two balls and the cone that touches both) and triangles
  * with smooth normals. Everything rounded is one of the first; everything plate-like is a mesh of the second.
  */
-import { add, cross, sub, times, unit, vec, type Vector } from './vector.js';
+import { add, cross, sub, unit, vec, type Vector } from './vector.js';
 
 export interface Hit {
   t: number;
@@ -43,7 +43,13 @@ export class Solids {
     }
   }
 
-  triangle(p: readonly Vector[], n: readonly Vector[], chart: readonly number[], material: number, shade: number): void {
+  triangle(
+    p: readonly Vector[],
+    n: readonly Vector[],
+    chart: readonly number[],
+    material: number,
+    shade: number,
+  ): void {
     const i = this.room(1, material, shade);
     const [a, b, c] = p as [Vector, Vector, Vector];
     const ab = sub(b, a);
@@ -69,10 +75,19 @@ export class Solids {
     for (let j = 0; j < rows; j++) {
       for (let i = 0; i < columns; i++) {
         const q = [j * w + i, j * w + i + 1, (j + 1) * w + i + 1, (j + 1) * w + i];
-        for (const [a, b, c] of [[q[0]!, q[1]!, q[2]!], [q[0]!, q[2]!, q[3]!]] as const) {
+        for (const [a, b, c] of [
+          [q[0]!, q[1]!, q[2]!],
+          [q[0]!, q[2]!, q[3]!],
+        ] as const) {
           const chart = [a, b, c].flatMap((k) => [(k % w) / columns, Math.floor(k / w) / rows]);
           const three = [a, b, c];
-          this.triangle(three.map((k) => points[k]!), three.map((k) => normals[k]!), chart, material, shade);
+          this.triangle(
+            three.map((k) => points[k]!),
+            three.map((k) => normals[k]!),
+            chart,
+            material,
+            shade,
+          );
         }
       }
     }
@@ -87,15 +102,23 @@ export class Solids {
       const rb = d[o + 7]!;
       const b = vec(d[o + 3]!, d[o + 4]!, d[o + 5]!);
       return [
-        Math.min(a.x - ra, b.x - rb), Math.min(a.y - ra, b.y - rb), Math.min(a.z - ra, b.z - rb),
-        Math.max(a.x + ra, b.x + rb), Math.max(a.y + ra, b.y + rb), Math.max(a.z + ra, b.z + rb),
+        Math.min(a.x - ra, b.x - rb),
+        Math.min(a.y - ra, b.y - rb),
+        Math.min(a.z - ra, b.z - rb),
+        Math.max(a.x + ra, b.x + rb),
+        Math.max(a.y + ra, b.y + rb),
+        Math.max(a.z + ra, b.z + rb),
       ];
     }
     const b = add(a, vec(d[o + 3]!, d[o + 4]!, d[o + 5]!));
     const c = add(a, vec(d[o + 6]!, d[o + 7]!, d[o + 8]!));
     return [
-      Math.min(a.x, b.x, c.x), Math.min(a.y, b.y, c.y), Math.min(a.z, b.z, c.z),
-      Math.max(a.x, b.x, c.x), Math.max(a.y, b.y, c.y), Math.max(a.z, b.z, c.z),
+      Math.min(a.x, b.x, c.x),
+      Math.min(a.y, b.y, c.y),
+      Math.min(a.z, b.z, c.z),
+      Math.max(a.x, b.x, c.x),
+      Math.max(a.y, b.y, c.y),
+      Math.max(a.z, b.z, c.z),
     ];
   }
 
@@ -107,20 +130,37 @@ export class Solids {
   }
 
   private meetTriangle(
-    i: number, ox: number, oy: number, oz: number, dx: number, dy: number, dz: number, hit: Hit,
+    i: number,
+    ox: number,
+    oy: number,
+    oz: number,
+    dx: number,
+    dy: number,
+    dz: number,
+    hit: Hit,
   ): boolean {
     const d = this.data;
     const o = i * SIZE;
-    const ex = d[o + 3]!, ey = d[o + 4]!, ez = d[o + 5]!;
-    const fx = d[o + 6]!, fy = d[o + 7]!, fz = d[o + 8]!;
-    const px = dy * fz - dz * fy, py = dz * fx - dx * fz, pz = dx * fy - dy * fx;
+    const ex = d[o + 3]!,
+      ey = d[o + 4]!,
+      ez = d[o + 5]!;
+    const fx = d[o + 6]!,
+      fy = d[o + 7]!,
+      fz = d[o + 8]!;
+    const px = dy * fz - dz * fy,
+      py = dz * fx - dx * fz,
+      pz = dx * fy - dy * fx;
     const det = ex * px + ey * py + ez * pz;
     if (det > -1e-14 && det < 1e-14) return false;
     const inv = 1 / det;
-    const tx = ox - d[o]!, ty = oy - d[o + 1]!, tz = oz - d[o + 2]!;
+    const tx = ox - d[o]!,
+      ty = oy - d[o + 1]!,
+      tz = oz - d[o + 2]!;
     const u = (tx * px + ty * py + tz * pz) * inv;
     if (u < 0 || u > 1) return false;
-    const qx = ty * ez - tz * ey, qy = tz * ex - tx * ez, qz = tx * ey - ty * ex;
+    const qx = ty * ez - tz * ey,
+      qy = tz * ex - tx * ez,
+      qz = tx * ey - ty * ex;
     const v = (dx * qx + dy * qy + dz * qz) * inv;
     if (v < 0 || u + v > 1) return false;
     const t = (fx * qx + fy * qy + fz * qz) * inv;
@@ -139,14 +179,28 @@ export class Solids {
 
   /** @see Quílez, "Round cone intersection": the quadratic of the cone between the two tangent circles, then the balls */
   private meetCone(
-    i: number, ox: number, oy: number, oz: number, dx: number, dy: number, dz: number, hit: Hit,
+    i: number,
+    ox: number,
+    oy: number,
+    oz: number,
+    dx: number,
+    dy: number,
+    dz: number,
+    hit: Hit,
   ): boolean {
     const d = this.data;
     const o = i * SIZE;
-    const ax = d[o]!, ay = d[o + 1]!, az = d[o + 2]!;
-    const ra = d[o + 6]!, rb = d[o + 7]!;
-    const bx = d[o + 3]! - ax, by = d[o + 4]! - ay, bz = d[o + 5]! - az;
-    const px = ox - ax, py = oy - ay, pz = oz - az;
+    const ax = d[o]!,
+      ay = d[o + 1]!,
+      az = d[o + 2]!;
+    const ra = d[o + 6]!,
+      rb = d[o + 7]!;
+    const bx = d[o + 3]! - ax,
+      by = d[o + 4]! - ay,
+      bz = d[o + 5]! - az;
+    const px = ox - ax,
+      py = oy - ay,
+      pz = oz - az;
     const rr = ra - rb;
     const m0 = bx * bx + by * by + bz * bz;
     const m1 = bx * px + by * py + bz * pz;
@@ -174,7 +228,9 @@ export class Solids {
         const ta = -m3 - Math.sqrt(ha);
         if (ta > 1e-5 && m1 - ra * rr + ta * m2 <= 0) t = ta;
       }
-      const qx = px - bx, qy = py - by, qz = pz - bz;
+      const qx = px - bx,
+        qy = py - by,
+        qz = pz - bz;
       const m3b = dx * qx + dy * qy + dz * qz;
       const hb = m3b * m3b - (qx * qx + qy * qy + qz * qz) + rb * rb;
       if (hb > 0) {
@@ -219,29 +275,4 @@ export class Solids {
     this.materials = more(this.materials, new Uint16Array(n));
     this.shades = more(this.shades, new Float32Array(n));
   }
-}
-
-/** A closed bag of triangles: a ball squeezed and turned, its surface moved in or out by `relief` (mm). */
-export function ellipsoid(
-  solids: Solids,
-  centre: Vector,
-  axes: readonly [Vector, Vector, Vector],
-  material: number,
-  shade: number,
-  relief: (on: Vector) => number = () => 0,
-  fine = 24,
-): void {
-  solids.sheet(
-    fine * 2,
-    fine,
-    (u, v) => {
-      const polar = Math.PI * Math.min(0.9995, Math.max(0.0005, 1 - v));
-      const round = 2 * Math.PI * u;
-      const on = vec(Math.sin(polar) * Math.cos(round), Math.sin(polar) * Math.sin(round), Math.cos(polar));
-      const out = add(add(times(axes[0], on.x), times(axes[1], on.y)), times(axes[2], on.z));
-      return add(centre, add(out, times(unit(out), relief(on))));
-    },
-    material,
-    shade,
-  );
 }

@@ -14,7 +14,18 @@ export class Tracer {
   private readonly hit: Hit = { t: 0, solid: -1, nx: 0, ny: 0, nz: 0, u: 0, v: 0 };
   private readonly shadow: Hit = { t: 0, solid: -1, nx: 0, ny: 0, nz: 0, u: 0, v: 0 };
   private readonly surface: Surface = {
-    r: 0, g: 0, b: 0, gloss: 0, rough: 1, through: 0, er: 0, eg: 0, eb: 0, nx: 0, ny: 0, nz: 1,
+    r: 0,
+    g: 0,
+    b: 0,
+    gloss: 0,
+    rough: 1,
+    through: 0,
+    er: 0,
+    eg: 0,
+    eb: 0,
+    nx: 0,
+    ny: 0,
+    nz: 1,
   };
   private readonly sky = new Float64Array(3);
 
@@ -50,7 +61,14 @@ export class Tracer {
       const gx = hit.nx;
       const gy = hit.ny;
       const gz = hit.nz;
-      this.ask({ x: px, y: py, z: pz, u: hit.u, v: hit.v, shade: hit.solid >= 0 ? scene.solids.shades[hit.solid]! : 0 });
+      this.ask({
+        x: px,
+        y: py,
+        z: pz,
+        u: hit.u,
+        v: hit.v,
+        shade: hit.solid >= 0 ? scene.solids.shades[hit.solid]! : 0,
+      });
       const s = { ...surface };
       out[0]! += wr * s.er;
       out[1]! += wg * s.eg;
@@ -58,7 +76,8 @@ export class Tracer {
       const lx = px + gx * 2e-4;
       const ly = py + gy * 2e-4;
       const lz = pz + gz * 2e-4;
-      for (const light of scene.lights) this.addLight(light, s, lx, ly, lz, gx, gy, gz, dx, dy, dz, wr, wg, wb, out, bounce);
+      for (const light of scene.lights)
+        this.addLight(light, s, lx, ly, lz, gx, gy, gz, dx, dy, dz, wr, wg, wb, out, bounce);
       if (bounce === this.bounces) return;
       // Gloss or scatter, by their shares.
       const facing = Math.max(0, -(s.nx * dx + s.ny * dy + s.nz * dz));
@@ -105,8 +124,22 @@ export class Tracer {
   }
 
   private addLight(
-    light: Light, s: Surface, lx: number, ly: number, lz: number, gx: number, gy: number, gz: number,
-    dx: number, dy: number, dz: number, wr: number, wg: number, wb: number, out: Float64Array, bounce: number,
+    light: Light,
+    s: Surface,
+    lx: number,
+    ly: number,
+    lz: number,
+    gx: number,
+    gy: number,
+    gz: number,
+    dx: number,
+    dy: number,
+    dz: number,
+    wr: number,
+    wg: number,
+    wb: number,
+    out: Float64Array,
+    bounce: number,
   ): void {
     const { random } = this;
     let x = light.x + light.spread * (random.next() + random.next() - 1) * 1.2;
@@ -139,7 +172,8 @@ export class Tracer {
       const d = c * c * (a2 - 1) + 1;
       const cosine = Math.max(0, (x * hx + y * hy + z * hz) * h);
       const fresnel = s.gloss + (1 - s.gloss) * (1 - cosine) ** 5;
-      const shine = c > 0 ? Math.min(9, (fresnel * a2) / (4 * d * d) / Math.max(0.25, -(dx * s.nx + dy * s.ny + dz * s.nz))) : 0;
+      const shine =
+        c > 0 ? Math.min(9, (fresnel * a2) / (4 * d * d) / Math.max(0.25, -(dx * s.nx + dy * s.ny + dz * s.nz))) : 0;
       r += shine;
       g += shine;
       b += shine;
@@ -192,7 +226,8 @@ export class Tracer {
     surface.ny = hit.ny;
     surface.nz = hit.nz;
     const n = hit.solid === GROUND ? 0 : 1;
-    const material: Material | undefined = n === 0 ? scene.groundMaterial : scene.materials[scene.solids.materials[hit.solid]!];
+    const material: Material | undefined =
+      n === 0 ? scene.groundMaterial : scene.materials[scene.solids.materials[hit.solid]!];
     if (!material) throw new Error('A solid has a material that the scene does not have.');
     material(at, surface);
     const l = 1 / Math.sqrt(surface.nx ** 2 + surface.ny ** 2 + surface.nz ** 2);
