@@ -77,6 +77,7 @@ export class Uploads {
 
   /** Answers a request of the protocol; the route has made sure that the person may. */
   handle(req: IncomingMessage, res: ServerResponse): Promise<void> {
+    takeCallbackAlone(res);
     return this.tus.handle(req, res);
   }
 
@@ -185,4 +186,17 @@ async function modified(path: string): Promise<number | null> {
     if ((error as NodeJS.ErrnoException).code === 'ENOENT') return null;
     throw error;
   }
+}
+
+/**
+ * Lets `res.end(callback)` be said. Node takes it, but the session's and the compression's own `end` would take
+ * the callback for the last bytes.
+ */
+function takeCallbackAlone(res: ServerResponse): void {
+  const end = res.end.bind(res) as (chunk?: unknown, encoding?: unknown, done?: unknown) => ServerResponse;
+  res.end = ((chunk?: unknown, encoding?: unknown, done?: unknown) => {
+    if (typeof chunk !== 'function') return end(chunk, encoding, done);
+    res.once('close', chunk as () => void);
+    return end();
+  }) as ServerResponse['end'];
 }

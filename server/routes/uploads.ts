@@ -26,6 +26,8 @@ export function mountUploads(app: Express, { uploads, maxBytes, clock }: { uploa
       res.status(req.method === 'HEAD' ? 200 : req.method === 'PATCH' ? 409 : 404).end();
       return;
     }
+    // the protocol's server ends the connection of a body it has read; said beforehand, nobody sends the next part into it
+    if (req.method === 'PATCH' || req.method === 'POST') res.set('Connection', 'close');
     await uploads.handle(req, res);
   });
 }
