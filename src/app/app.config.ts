@@ -5,11 +5,13 @@ import {
   provideBrowserGlobalErrorListeners,
   type ApplicationConfig,
 } from '@angular/core';
-import { provideClientHydration } from '@angular/platform-browser';
+import { MAT_FORM_FIELD_DEFAULT_OPTIONS, type MatFormFieldDefaultOptions } from '@angular/material/form-field';
+import { provideClientHydration, withI18nSupport } from '@angular/platform-browser';
 import {
   provideRouter,
   TitleStrategy,
   withComponentInputBinding,
+  withEnabledBlockingInitialNavigation,
   withInMemoryScrolling,
   withRouterConfig,
 } from '@angular/router';
@@ -23,14 +25,20 @@ export const appConfig: ApplicationConfig = {
     provideRouter(
       routes,
       withComponentInputBinding(),
+      // What the server rendered stays in sight until its page's script is there; otherwise it blinks.
+      withEnabledBlockingInitialNavigation(),
       // "Gallery" from far down in the gallery leads to its beginning.
       withRouterConfig({ onSameUrlNavigation: 'reload' }),
       withInMemoryScrolling({ scrollPositionRestoration: 'enabled', anchorScrolling: 'enabled' }),
     ),
     provideHttpClient(withFetch()), // Angular's own XSRF-TOKEN cookie and X-XSRF-TOKEN header are on by default
     // No event replay: it needs an inline script, which the content security policy refuses.
-    provideClientHydration(),
+    provideClientHydration(withI18nSupport()),
     provideAppInitializer(() => inject(SessionStore).restore()),
+    {
+      provide: MAT_FORM_FIELD_DEFAULT_OPTIONS,
+      useValue: { appearance: 'outline' } satisfies MatFormFieldDefaultOptions,
+    },
     { provide: TitleStrategy, useClass: PageTitleStrategy },
   ],
 };

@@ -56,6 +56,6 @@ function byStatus(status: number): string {
   if (status === 403) return 'forbidden';
   if (status === 404) return 'not-found';
   if (status === 413) return 'too-large';
-  if (status === 429) return 'too-many-requests';
+  if (status === 429 || status === 503) return 'busy';
   return 'unexpected';
 }

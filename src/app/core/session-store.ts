@@ -1,7 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { computed, inject, Injectable, PLATFORM_ID, signal } from '@angular/core';
 import { isPlatformServer } from '@angular/common';
-import { catchError, map, of, tap, throwError, type Observable } from 'rxjs';
+import { catchError, map, of, shareReplay, tap, throwError, type Observable } from 'rxjs';
 import type { Role } from '@shared/permission/can';
 import { sessionRoutes, type Me, type Session, type SignIn } from '@shared/contracts/session';
 import { toApiProblem } from './api-problem';
@@ -19,14 +19,14 @@ export class SessionStore {
   /** the demo's people, only while the demo is on */
   readonly demo = computed(() => this.session().demo);
 
-  /** Asked once before the first page shows, which also brings the XSRF cookie. Without an answer one is a visitor. */
+  private readonly restored = this.onServer ? of(undefined) : this.fetch().pipe(shareReplay(1));
+
+  /**
+   * Ends when it is known who is signed in. Asked once before the first page shows, which also brings the
+   * XSRF cookie; guards wait for it. Without an answer one is a visitor.
+   */
   restore(): Observable<void> {
-    if (this.onServer) return of(undefined);
-    return this.http.get<Session>(sessionRoutes.read.path, { transferCache: false }).pipe(
-      tap((session) => this.session.set(session)),
-      map(() => undefined),
-      catchError(() => of(undefined)),
-    );
+    return this.restored;
   }
 
   signIn(body: SignIn): Observable<Session> {
@@ -55,5 +55,13 @@ export class SessionStore {
 
   has(role: Role): boolean {
     return this.user()?.role === role;
+  }
+
+  private fetch(): Observable<void> {
+    return this.http.get<Session>(sessionRoutes.read.path, { transferCache: false }).pipe(
+      tap((session) => this.session.set(session)),
+      map(() => undefined),
+      catchError(() => of(undefined)),
+    );
   }
 }

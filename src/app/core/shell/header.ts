@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { MatMenuModule } from '@angular/material/menu';
 import { Router, RouterLink, RouterLinkActive } from '@angular/router';
-import { mdiAccountOutline, mdiMagnify, mdiMenu, mdiThemeLightDark } from '@mdi/js';
+import { mdiAccountOutline, mdiCircleHalfFull, mdiMenu } from '@mdi/js';
 import { Icon } from '../../ui/icon/icon';
 import { Mark } from '../../ui/mark/mark';
 import { SessionStore } from '../session-store';
@@ -25,8 +25,7 @@ export class Header {
   protected readonly icons = {
     account: mdiAccountOutline,
     menu: mdiMenu,
-    theme: mdiThemeLightDark,
-    search: mdiMagnify,
+    theme: mdiCircleHalfFull,
   };
   protected readonly user = this.session.user;
   protected readonly theme = this.themes.theme;

@@ -21,8 +21,8 @@ interface BarMeaning {
   styleUrl: './about.scss',
 })
 export class About {
-  /** a picture this wide at 1 µm/px has a bar of 200 µm */
-  protected readonly sampleWidth = 1000;
+  /** a picture this wide at 1 µm/px has a bar of 200 µm, a quarter of it */
+  protected readonly sampleWidth = 800;
   protected readonly bars: readonly BarMeaning[] = [
     {
       name: $localize`Calibrated`,

@@ -54,8 +54,7 @@ export class FindPictureCard {
   readonly mayEdit = input(false);
 
   protected readonly about = computed(() => {
-    const { title, light, role } = this.picture();
-    const words = role === 'reference' ? $localize`scale reference` : lightWords(light);
-    return [title, words].filter(Boolean).join(', ');
+    const { title, light } = this.picture();
+    return [title, lightWords(light)].filter(Boolean).join(', ');
   });
 }

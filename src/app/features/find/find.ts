@@ -9,10 +9,11 @@ import {
   signal,
 } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
 import { findRoutes, type FindView } from '@shared/contracts/finds';
-import { plainName } from '@shared/taxonomy/name';
 import { Api } from '../../core/api';
 import { toApiProblem } from '../../core/api-problem';
+import { nameWords } from '../../core/name-words';
 import { PageMeta } from '../../core/page-meta';
 import { Empty } from '../../ui/empty/empty';
 import { renditionUrl } from '../../ui/picture/picture';
@@ -31,6 +32,7 @@ import { VisibilityPanel } from './visibility-panel';
   selector: 'app-find',
   imports: [
     MatButtonModule,
+    RouterLink,
     AddObservation,
     DeterminationPanel,
     Empty,
@@ -82,7 +84,7 @@ export class Find {
   }
 
   private titleOf(find: FindView): string {
-    const name = find.standing ? plainName(find.standing.name) : $localize`Not yet named`;
+    const name = find.standing ? nameWords(find.standing.name) : $localize`Not yet named`;
     return `${name}, ${find.number}`;
   }
 }

@@ -33,14 +33,16 @@ export class Observation {
     const { observer } = this.observation();
     return observer.id === this.finderId() ? null : observer.name;
   });
-  protected readonly loose = computed(() => this.observation().pictures.filter((p) => p.preparationId === null));
+  private readonly subjects = computed(() => this.observation().pictures.filter((p) => p.role === 'subject'));
+  protected readonly loose = computed(() => this.subjects().filter((p) => p.preparationId === null));
+  protected readonly references = computed(() => this.observation().pictures.filter((p) => p.role === 'reference'));
   protected readonly preparations = computed(() =>
     this.observation().preparations.map((preparation) => ({
       ...preparation,
       about: [preparation.part, preparation.medium, preparation.stain, conditionWords(preparation.condition)]
         .filter(Boolean)
         .join(', '),
-      pictures: this.observation().pictures.filter((picture) => picture.preparationId === preparation.id),
+      pictures: this.subjects().filter((picture) => picture.preparationId === preparation.id),
     })),
   );
 

@@ -4,7 +4,7 @@ import type { Scale } from '@shared/scale/scale';
 import { notation } from '@shared/taxonomy/spore-notation';
 import { groundsOf, summaryOf, valuesUm } from '../../core/series-summary';
 import { structureWords } from '../../core/structure-words';
-import type { PublishedBand } from './strip-plot-layout';
+import type { PublishedRange } from '../../ui/strip-plot/strip-plot';
 
 const SPORE = 'spore';
 /** µm; the finer step is left to those who can justify it */
@@ -17,7 +17,7 @@ export interface SizeLine {
   /** combined standard uncertainty of the mean, µm */
   readonly u: number;
   readonly values: readonly number[];
-  readonly bands: readonly PublishedBand[];
+  readonly published: readonly PublishedRange[];
 }
 
 /** One series as the find shows it. */
@@ -29,7 +29,8 @@ export interface SeriesCard {
   /** null: no body has a scale, so there is nothing in µm */
   readonly grounds: Scale['grounds'] | null;
   readonly sizes: readonly SizeLine[];
-  readonly notation: string | null;
+  /** sizes, Q, Qm: a line may end between them */
+  readonly notation: readonly string[] | null;
 }
 
 /** @param find whose series it is: its fruit bodies and the published sizes to hold the series against */
@@ -52,22 +53,22 @@ function sizeLine(
 ): SizeLine[] {
   const summary = summaryOf(series, dimension);
   if (!summary) return [];
-  const bands = published
+  const ranges = published
     .filter((size) => size.structure === series.structure && size.dimension === dimension)
-    .map((size) => ({ label: size.taxonName, source: sourceOf(size), low: size.minUm, high: size.maxUm }));
+    .map((size) => ({ name: size.taxonName, source: sourceOf(size), low: size.minUm, high: size.maxUm }));
   const words = dimension === 'length' ? $localize`along` : $localize`across`;
-  return [{ dimension, words, um: summary.mean, u: summary.u, values: valuesUm(series, dimension), bands }];
+  return [{ dimension, words, um: summary.mean, u: summary.u, values: valuesUm(series, dimension), published: ranges }];
 }
 
 function sourceOf({ source, year }: FindView['publishedSizes'][number]): string {
   const author = source.split(/[,(]/)[0]?.trim() ?? source;
-  return year === null ? author : `${author} ${year}`;
+  return year === null ? $localize`${author}:author:, year unknown` : `${author} ${year}`;
 }
 
 /** Of the spores that have a length in µm; one collection, the find itself. */
-function sporeNotation(series: SeriesView, fruitBodies: number): string | null {
+function sporeNotation(series: SeriesView, fruitBodies: number): readonly string[] | null {
   const bodies = series.bodies.flatMap(({ lengthUm, widthUm }) => (lengthUm === null ? [] : [{ lengthUm, widthUm }]));
-  return notation({ bodies, fruitBodies, collections: 1, roundTo: ROUND_TO });
+  return notation({ bodies, fruitBodies, collections: 1, roundTo: ROUND_TO })?.split(', ') ?? null;
 }
 
 function toldOf({ preparation, edgeRule, ornamentIncluded, observer }: SeriesView): string {

@@ -5,10 +5,11 @@ import { MatInputModule } from '@angular/material/input';
 import { findRoutes, type FindView } from '@shared/contracts/finds';
 import { seriesRoutes } from '@shared/contracts/series';
 import { Api, pathOf } from '../../core/api';
+import { fruitBodyCount } from '../../core/count-words';
 import { Submission } from '../../core/submission';
 import { Quantity } from '../../ui/quantity/quantity';
+import { StripPlot } from '../../ui/strip-plot/strip-plot';
 import { seriesCard } from './series-card';
-import { StripPlot } from './strip-plot';
 
 /** What was measured, series by series: preparations are never silently pooled. */
 @Component({
@@ -31,6 +32,7 @@ export class SeriesPanel {
     })),
   );
   protected readonly hasSpores = computed(() => this.cards().some((card) => card.notation !== null));
+  protected readonly fruitBodies = computed(() => fruitBodyCount(this.find().fruitBodies));
   protected readonly counting = signal(false);
   protected readonly submission = new Submission();
 

@@ -4,8 +4,9 @@ import { MatButtonModule } from '@angular/material/button';
 import { Router, RouterLink } from '@angular/router';
 import { galleryRoutes, type GalleryTile } from '@shared/contracts/gallery';
 import { taxonRoutes } from '@shared/contracts/taxa';
-import { plainName } from '@shared/taxonomy/name';
 import { Api } from '../../core/api';
+import { pictureCount } from '../../core/count-words';
+import { nameWords } from '../../core/name-words';
 import { PageMeta } from '../../core/page-meta';
 import { Empty } from '../../ui/empty/empty';
 import { renditionUrl } from '../../ui/picture/picture';
@@ -54,7 +55,8 @@ export class Gallery {
 
   private readonly firstPage = computed(() => (this.first.hasValue() ? this.first.value() : null));
   private readonly tiles = computed(() => (this.held() ? this.store.tiles() : (this.firstPage()?.tiles ?? [])));
-  protected readonly total = computed(() => (this.held() ? this.store.total() : (this.firstPage()?.total ?? 0)));
+  private readonly total = computed(() => (this.held() ? this.store.total() : (this.firstPage()?.total ?? 0)));
+  protected readonly count = computed(() => pictureCount(this.total()));
   protected readonly next = computed(() => (this.held() ? this.store.next() : (this.firstPage()?.next ?? null)));
   protected readonly state = computed(() => {
     if (this.held() || this.first.hasValue()) return this.tiles().length > 0 ? 'wall' : 'empty';
@@ -96,7 +98,7 @@ export class Gallery {
       const cover = this.hero() ?? this.tiles()[0] ?? null;
       const name = this.taxonName();
       meta.describe({
-        title: name ? plainName(name) : 'Motebook',
+        title: name ? nameWords(name) : 'Motebook',
         description: $localize`A gallery of very small living things in which every picture carries a scale that can be trusted.`,
         image: cover ? renditionUrl(cover, Math.max(...cover.renditionWidths, 0)) : null,
       });

@@ -21,10 +21,10 @@ import { TaxonName } from '../../ui/taxon-name/taxon-name';
         <p class="kind" i18n>Newest picture</p>
         <h2><app-taxon-name [name]="tile().name" /></h2>
         <p class="title">{{ tile().title }}</p>
-        <p class="soft">{{ light() }} · {{ tile().publicPlace }} · {{ tile().findNumber }}</p>
+        <p class="about soft">{{ light() }} · {{ tile().publicPlace }} · {{ tile().findNumber }}</p>
         <app-rule />
         <a mat-flat-button [routerLink]="['/finds', tile().findId]" i18n>Open the find</a>
-        <p class="credit soft">{{ tile().creditLine }}</p>
+        <p class="credit soft" i18n>Picture: {{ tile().creditLine }}</p>
       </div>
     </section>
   `,

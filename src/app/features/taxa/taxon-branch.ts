@@ -1,5 +1,6 @@
 import { ChangeDetectionStrategy, Component, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
+import { pictureCount } from '../../core/count-words';
 import { rankWords } from '../../core/rank-words';
 import { TaxonName } from '../../ui/taxon-name/taxon-name';
 import type { TaxonNode } from './taxon-tree';
@@ -17,9 +18,9 @@ import type { TaxonNode } from './taxon-tree';
             <a [routerLink]="['/taxa', node.id]"><app-taxon-name [name]="node.name" /></a>
             <span class="soft">{{ rank(node.rank) }}</span>
             @if (node.pictures > 0) {
-              <a class="pictures numbers" routerLink="/" [queryParams]="{ taxon: node.id }" i18n>
-                {node.pictures, plural, =1 {1 picture} other {{{ node.pictures }} pictures}}
-              </a>
+              <a class="pictures numbers" routerLink="/" [queryParams]="{ taxon: node.id }">{{
+                pictureCount(node.pictures)
+              }}</a>
             }
           </span>
           @if (node.below.length > 0) {
@@ -74,4 +75,5 @@ import type { TaxonNode } from './taxon-tree';
 export class TaxonBranch {
   readonly nodes = input.required<readonly TaxonNode[]>();
   protected readonly rank = rankWords;
+  protected readonly pictureCount = pictureCount;
 }

@@ -2,9 +2,10 @@ import { ChangeDetectionStrategy, Component, computed, effect, inject, input, RE
 import { MatButtonModule } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import { taxonRoutes } from '@shared/contracts/taxa';
-import { plainName } from '@shared/taxonomy/name';
 import { Api } from '../../core/api';
 import { toApiProblem } from '../../core/api-problem';
+import { pictureCount } from '../../core/count-words';
+import { nameWords } from '../../core/name-words';
 import { PageMeta } from '../../core/page-meta';
 import { rankWords } from '../../core/rank-words';
 import { Empty } from '../../ui/empty/empty';
@@ -32,6 +33,7 @@ export class Taxon {
   protected readonly taxon = computed(() => (this.answer.hasValue() ? this.answer.value() : null));
   protected readonly missing = computed(() => toApiProblem(this.answer.error()).code === 'not-found');
   protected readonly rank = rankWords;
+  protected readonly pictureCount = pictureCount;
 
   constructor() {
     const meta = inject(PageMeta);
@@ -39,11 +41,11 @@ export class Taxon {
     effect(() => {
       const taxon = this.taxon();
       if (taxon) {
-        const name = plainName(taxon.name);
+        const name = nameWords(taxon.name);
         const cover = taxon.pictures[0];
         meta.describe({
           title: name,
-          description: $localize`${name}: published sizes with their sources, and pictures with a scale.`,
+          description: $localize`Published sizes of ${name} with their sources, and pictures with a scale.`,
           image: cover ? renditionUrl(cover, Math.max(...cover.renditionWidths, 0)) : null,
         });
       }

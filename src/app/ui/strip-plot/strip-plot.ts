@@ -86,8 +86,8 @@ export class StripPlot {
     const digits = decimals + 1;
     const own =
       values.length === 0
-        ? $localize`${name}: nothing measured yet`
-        : $localize`${name}: ${values.length}:count: values from ${Math.min(...values).toFixed(digits)}:least: to ${Math.max(...values).toFixed(digits)}:most: ${unit}`;
+        ? $localize`${name}:what:: nothing measured yet`
+        : $localize`${name}:what:: ${values.length}:count: values from ${Math.min(...values).toFixed(digits)}:least: to ${Math.max(...values).toFixed(digits)}:most: ${unit}`;
     const books = this.published().map(
       ({ name: taxon, low, high }) => $localize`${taxon}, published: ${low} to ${high} ${unit}`,
     );

@@ -92,7 +92,7 @@ describe('calibrating', () => {
     button('Keep').click();
     http
       .expectOne('/api/rigs/rig/settings/setting/calibrations')
-      .flush({ type: '/problems/picture-not-ready', title: '', status: 409 }, { status: 409, statusText: 'Conflict' });
+      .flush({ type: '/problems/not-ready', title: '', status: 409 }, { status: 409, statusText: 'Conflict' });
     await fixture.whenStable();
     expect(text()).toContain('still being taken in');
     expect(button('Keep').disabled).toBe(false);
