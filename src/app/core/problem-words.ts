@@ -46,7 +46,8 @@ const WORDS: Readonly<Record<string, Words>> = {
   'no-such-structure': () => $localize`There is no such structure.`,
   'not-a-place': () => $localize`The wall has changed since. Begin at the newest picture.`,
   // pictures
-  'type-not-accepted': () => $localize`This kind of file is not taken. Bring JPEG, PNG, TIFF, WebP, AVIF or GIF.`,
+  'type-not-accepted': (f) => notTaken(f['found']),
+  'file-not-opened': () => $localize`The file could not be opened. Was it moved, or its card taken out?`,
   'too-many-pixels': (f) =>
     $localize`The picture has ${say(f['megapixels'])}:megapixels: megapixels; ${say(f['mostMegapixels'])}:most: are taken here.`,
   'too-large': () => $localize`The file is larger than what is taken here.`,
@@ -94,6 +95,16 @@ const WORDS: Readonly<Record<string, Words>> = {
   'no-image': () => $localize`So near, the lens throws no image. Check the distance.`,
   'reference-behind-lens': () => $localize`The reference would lie behind the lens. Check the distance.`,
 };
+
+/** @param found what the file is, as far as its first bytes tell */
+function notTaken(found: string | number | undefined): string {
+  if (found === 'HEIC') {
+    return $localize`This is HEIC, which is not taken. Let the phone save or send it as JPEG; JPEG, PNG, TIFF (8 or 16 bit) and WebP are taken.`;
+  }
+  return found === undefined || found === 'unknown' || found === 'nothing'
+    ? $localize`This is not a picture of a kind that is taken: JPEG, PNG, TIFF (8 or 16 bit) and WebP are.`
+    : $localize`This is ${say(found)}:kind:, which is not taken. JPEG, PNG, TIFF (8 or 16 bit) and WebP are.`;
+}
 
 const FIELD_WORDS: Readonly<Record<string, string>> = {
   too_small: $localize`Too short or too small.`,

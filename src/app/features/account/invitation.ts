@@ -32,9 +32,11 @@ export class Invitation {
   /** from the address that the mail led to */
   readonly token = input.required<string>();
 
-  protected readonly invitation = this.api.resource(sessionRoutes.readInvitation, () => ({
-    params: { token: this.token() },
-  }));
+  private readonly accepted = signal(false);
+  /** not asked again once it was taken: it is gone then */
+  protected readonly invitation = this.api.resource(sessionRoutes.readInvitation, () =>
+    this.accepted() ? undefined : { params: { token: this.token() } },
+  );
   protected readonly canAskAgain = computed(() => toApiProblem(this.invitation.error()).status !== 404);
   protected readonly busy = signal(false);
   protected readonly problem = signal<ApiProblem | null>(null);
@@ -58,6 +60,7 @@ export class Invitation {
     const body = { token: this.token(), name, password, ...(named ? {} : { email }) };
     this.api.call(sessionRoutes.accept, { body }).subscribe({
       next: (session) => {
+        this.accepted.set(true);
         this.session.take(session);
         void this.router.navigateByUrl('/desk');
       },

@@ -9,6 +9,7 @@ import { dayWords } from '../../core/day-words';
 import { Empty } from '../../ui/empty/empty';
 import { Picture } from '../../ui/picture/picture';
 import { ProblemBox } from '../../ui/problem/problem';
+import { Rule } from '../../ui/rule/rule';
 import { TaxonName } from '../../ui/taxon-name/taxon-name';
 import { nextSteps } from './next-steps';
 import { scaleWords } from './rigs/calibration-words';
@@ -21,7 +22,7 @@ const STRIP = 10;
 /** A person's own place: what waits, what is theirs, what to do next. */
 @Component({
   selector: 'app-desk',
-  imports: [RouterLink, MatButtonModule, Empty, Picture, ProblemBox, TaxonName],
+  imports: [RouterLink, MatButtonModule, Empty, Picture, ProblemBox, Rule, TaxonName],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './desk.html',
   styleUrl: './desk.scss',

@@ -9,6 +9,7 @@ import {
   Injector,
   input,
   model,
+  output,
   signal,
   viewChild,
 } from '@angular/core';
@@ -49,6 +50,8 @@ export class PictureGrid {
 
   readonly groups = input.required<readonly TrayGroup[]>();
   readonly selection = model<Selection>(NOTHING);
+  /** a find is wanted of the pictures that are chosen now */
+  readonly makeFind = output<void>();
 
   protected readonly icons = { check: mdiCheckBold };
   protected readonly lightWords = LIGHT_WORDS;
