@@ -71,6 +71,7 @@ export function createPictureRooms(options: PictureRoomOptions) {
     jobs,
     files,
     arrivals,
+    images: imageService,
 
     mount(app: Express, mount: Mount): void {
       mountUploads(app, { uploads, maxBytes: config.maxUploadBytes, clock });

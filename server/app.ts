@@ -3,7 +3,7 @@ import compression from 'compression';
 import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import type { Logger } from 'pino';
-import { createFindRooms, mountFindRooms } from './app-finds.js';
+import { createFindRooms, type FindRooms, mountFindRooms } from './app-finds.js';
 import { createPictureRooms, type PictureRooms } from './app-pictures.js';
 import { type Clock, instant, today } from './clock.js';
 import type { Config } from './config.js';
@@ -69,6 +69,8 @@ export interface App {
   readonly jobs: JobRunner;
   /** brings in files that came by another way than an upload */
   readonly bringIn: PictureRooms['arrivals']['bringIn'];
+  /** the services that the demo is told through */
+  readonly rooms: FindRooms & { readonly scales: ScaleService; readonly images: PictureRooms['images'] };
   /** starts background work: jobs, outgoing mail */
   start(): void;
   /** the link by which the first keeper comes in; null when there are people */
@@ -177,6 +179,7 @@ export function createApp(options: AppOptions): App {
     express: app,
     jobs,
     bringIn: (input) => pictureRooms.arrivals.bringIn(input),
+    rooms: { ...findRooms, scales, images: pictureRooms.images },
     start() {
       starting = pictureRooms.start().then(
         () => jobs.start(),

@@ -2,14 +2,14 @@ import { createServer } from 'node:http';
 import { pino } from 'pino';
 import { createApp } from './app.js';
 import { systemClock } from './clock.js';
+import { openWithDemo } from '../seeds/demo.js';
 import { readConfig } from './config.js';
-import { openDatabase } from './db/database.js';
 
 /** Opens the data folder, then listens; closes in order when asked to stop. */
 async function main(): Promise<void> {
   const config = readConfig(process.env);
   const log = pino({ level: config.logLevel });
-  const db = await openDatabase(config.dataDir);
+  const db = await openWithDemo({ config, log });
   const app = createApp({ config, db, clock: systemClock, log });
   const server = createServer(app.express);
   await new Promise<void>((resolve, reject) => {
