@@ -36,15 +36,13 @@ export class NoteExchange {
 
   /** What was done by anybody, oneself included, since an edit number. */
   since(imageId: string, after: number): Observable<Omit<Exchanged, 'pushedBy'>> {
-    return this.api
-      .call(noteRoutes.since, { params: { imageId }, query: { after } })
-      .pipe(
-        map(({ seq, edits }) => ({
-          seq,
-          edits: edits.map(({ edit }) => edit),
-          authors: edits.map(({ author }) => author),
-        })),
-      );
+    return this.api.call(noteRoutes.since, { params: { imageId }, query: { after } }).pipe(
+      map(({ seq, edits }) => ({
+        seq,
+        edits: edits.map(({ edit }) => edit),
+        authors: edits.map(({ author }) => author),
+      })),
+    );
   }
 
   /** What was left behind on other pictures (a lid closed on the train) goes out too. */
