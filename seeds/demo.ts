@@ -1,5 +1,5 @@
 import { existsSync } from 'node:fs';
-import { readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { readFile, rm, writeFile } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Logger } from 'pino';
@@ -94,11 +94,14 @@ async function addPeople(db: Database, clock: DemoClock, forTests: boolean): Pro
   return ids as Record<Role, string>;
 }
 
-/** Everything that filling in made. Only the session secret, which is made before it, stays. */
+/** What filling in makes, by name: a data folder that holds other things keeps them, and its session secret. */
+const MADE = [
+  ...['motebook.sqlite', 'motebook.sqlite-wal', 'motebook.sqlite-shm'],
+  ...['originals', 'renditions', 'uploads', 'portraits', 'mail'],
+];
+
 async function clear(dataDir: string): Promise<void> {
-  for (const name of await readdir(dataDir)) {
-    if (name !== 'session-secret' && name !== MARKER) await rm(join(dataDir, name), { recursive: true, force: true });
-  }
+  for (const name of MADE) await rm(join(dataDir, name), { recursive: true, force: true });
   await rm(join(dataDir, MARKER));
 }
 

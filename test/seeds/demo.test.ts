@@ -36,6 +36,7 @@ describe('the demo', () => {
     await (await openDatabase(dataDir)).close();
     mkdirSync(join(dataDir, 'originals', 'ab'), { recursive: true });
     writeFileSync(join(dataDir, 'originals', 'ab', 'half'), 'half');
+    writeFileSync(join(dataDir, 'somebody-else.txt'), 'kept');
     db = await openWithDemo({ config, log, forTests: true });
     app = createApp({ config, db, clock: systemClock, log, forTests: true });
     visitor = new Browser(request.agent(app.express));
@@ -62,9 +63,10 @@ describe('the demo', () => {
     return truth[names[row.original_name] as string] as TruePicture;
   };
 
-  it('begins anew where it was cut off, and leaves no mark', () => {
+  it('begins anew where it was cut off, leaves no mark, and touches nothing else', () => {
     expect(existsSync(join(dataDir, 'originals', 'ab', 'half'))).toBe(false);
     expect(readdirSync(dataDir)).not.toContain('demo-is-being-filled-in');
+    expect(readdirSync(dataDir)).toContain('somebody-else.txt');
   });
 
   it('lets its four people sign in', async () => {
