@@ -62,8 +62,9 @@ export function mountIiif(mount: Mount, options: IiifOptions): void {
     const name = params['revision'] === undefined ? image.id : `${image.id}~${image.revision}`;
     const { width, height, licence } = image;
     const body = iiifInfo({ id: `${publicUrl}/iiif/${name}`, width, height, licence, levels: await pictures.levels(image) });
-    res.type(accepts(req) === 'ld' ? `application/ld+json;profile="${PROFILE}"` : 'application/json');
-    res.send(JSON.stringify(body));
+    // bytes, so that Express adds no character set: JSON has none
+    res.setHeader('Content-Type', accepts(req) === 'ld' ? `application/ld+json;profile="${PROFILE}"` : 'application/json');
+    res.send(Buffer.from(JSON.stringify(body)));
   };
 
   const picture = async ({ params, req, res }: { params: Params; req: Request; res: Response }): Promise<void> => {
