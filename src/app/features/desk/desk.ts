@@ -40,6 +40,7 @@ export class Desk {
   // a resource's value throws while it has an error
   protected readonly findRows = computed(() => (this.finds.error() ? [] : (this.finds.value() ?? [])));
   protected readonly rigRows = computed(() => (this.rigs.error() ? [] : (this.rigs.value() ?? [])));
+  protected readonly waitingCount = computed(() => this.tray.ready().length + this.tray.beingRead().length);
   protected readonly waiting = computed(() =>
     this.tray.ready().flatMap(({ image }) => image ?? []).slice(0, STRIP),
   );

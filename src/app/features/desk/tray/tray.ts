@@ -142,7 +142,7 @@ export class Tray {
     this.grid()?.focus();
     const said = ids.length === 1 ? $localize`1 picture discarded.` : $localize`${ids.length}:count: pictures discarded.`;
     this.snackBar
-      .open(said, $localize`Have them back`, { duration: UNDO_MS })
+      .open(said, $localize`Undo`, { duration: UNDO_MS })
       .onAction()
       .subscribe(() => this.tray.keep(ids));
   }

@@ -21,8 +21,13 @@ export function fromFiles(pictures: readonly TrayPicture[]): FromFiles {
   return {
     day: days[0] ?? null,
     severalDays: days.length > 0 && days[0] !== days.at(-1),
-    place: pictures.find(({ exactPlace }) => exactPlace)?.exactPlace ?? null,
+    place: rounded(pictures.find(({ exactPlace }) => exactPlace)?.exactPlace ?? null),
   };
+}
+
+/** To a millionth of a degree, 0.1 m: finer than any receiver, and readable. */
+function rounded(place: TrayPicture['exactPlace']): FromFiles['place'] {
+  return place && { latitude: Number(place.latitude.toFixed(6)), longitude: Number(place.longitude.toFixed(6)) };
 }
 
 /** Words of fewer letters are *at*, *the*, *near*: they give nothing away. */

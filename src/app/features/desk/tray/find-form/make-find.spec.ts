@@ -45,7 +45,7 @@ describe('making a find', () => {
   });
   afterEach(() => http.verify());
 
-  it('reads date and exact place from the files, so that one touch makes it', async () => {
+  it('reads date and exact place from the files, so that one touch makes it, private and with the place blurred', async () => {
     await submit();
     const { request } = http.expectOne('/api/finds');
     expect(request.body).toEqual({
@@ -54,7 +54,7 @@ describe('making a find', () => {
       place: {
         exact: { words: '', latitude: 54.1, longitude: -0.5, uncertaintyM: null },
         publicWords: '',
-        sensitivity: 'none',
+        sensitivity: 'medium',
       },
       visibility: 'private',
       heldUntil: null,

@@ -39,7 +39,7 @@ export function placeGroup(form: NonNullableFormBuilder, place: FromFiles['place
       uncertaintyM: new FormControl<number | null>(null, Validators.min(1)),
     }),
     publicWords: form.control('', Validators.maxLength(120)),
-    sensitivity: form.control<Sensitivity>('none'),
+    sensitivity: form.control<Sensitivity>('medium'), // whoever says nothing gives no exact place away
   });
   return group;
 }
@@ -74,7 +74,7 @@ export class PlaceFields {
       switchMap((group) => group.valueChanges.pipe(startWith(null), map(() => group.getRawValue()))),
     ),
   );
-  protected readonly sensitivity = computed(() => this.value()?.sensitivity ?? 'none');
+  protected readonly sensitivity = computed(() => this.value()?.sensitivity ?? 'medium');
   protected readonly saysTooMuch = computed(() => {
     const value = this.value();
     return value !== undefined && givesAway(value.publicWords, value.exact.words);
