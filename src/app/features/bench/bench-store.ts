@@ -84,7 +84,7 @@ export class BenchStore {
       .filter(({ structure }) => structure === wanted)
       .sort((a, b) => Number(b.observer.id === own) - Number(a.observer.id === own));
   });
-  /** structures for the list, with the number of bodies measured by anybody on this preparation */
+  /** structures for the list, with the number of bodies in one's own series; those who only look see all */
   readonly structures = computed(() => {
     const measured = this.series().map(({ structure }) => structure);
     const shown = this.structure();
@@ -182,8 +182,9 @@ export class BenchStore {
   }
 
   private countOf(structure: string): number {
+    const own = this.mayMeasure() ? this.me()?.id : undefined;
     return this.series()
-      .filter((series) => series.structure === structure)
+      .filter((series) => series.structure === structure && (own === undefined || series.observer.id === own))
       .reduce((total, series) => total + this.bodiesOf(series).length, 0);
   }
 

@@ -57,6 +57,9 @@ import type { Awaits } from './tools/tool';
       font-weight: 600;
     }
     .zoom {
+      display: flex;
+      justify-content: flex-end;
+      gap: 0.4em;
       min-width: 6.4em;
       text-align: right;
     }

@@ -38,6 +38,12 @@ export class SeriesCard {
     const figures = this.figures();
     return figures ? figures.dimensions.map((one) => this.line(figures, one)) : [];
   });
+  /** those that published sizes can be laid beside; the first dimension where there are none */
+  protected readonly plots = computed(() => {
+    const plotted = this.lines().filter((line) => line.plotted !== null);
+    const held = plotted.filter((line) => line.published.length > 0);
+    return held.length > 0 ? held : plotted.slice(0, 1);
+  });
   protected readonly k = computed(() => {
     const k = this.figures()?.dimensions[0]?.summary.k;
     return k === undefined ? null : Number(k.toFixed(2));
@@ -45,7 +51,7 @@ export class SeriesCard {
   protected readonly q = computed(() => {
     const q = this.figures()?.q;
     if (!q) return null;
-    return q.u > 0 ? roundToUncertainty(q.mean, q.U) : { value: q.mean.toFixed(2), uncertainty: null };
+    return q.u > 0 ? roundToUncertainty(q.mean, q.U, 1) : { value: q.mean.toFixed(2), uncertainty: null };
   });
 
   private line({ unit, grounds, dimensions }: SeriesFigures, { dimension, summary, values }: DimensionFigures) {

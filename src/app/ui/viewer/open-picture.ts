@@ -27,6 +27,7 @@ export class OpenPicture {
   private readonly current = signal<Viewport | null>(null);
   private readonly isDrawn = signal(false);
   private readonly hasFailed = signal(false);
+  private closed = false;
 
   /** Each time the picture has been drawn, in the same frame: what lies over it redraws here to stay in step. */
   readonly frames: Observable<Viewport> = this.frame.asObservable();
@@ -44,7 +45,6 @@ export class OpenPicture {
   ) {
     this.viewer = new OpenSeadragon.Viewer({
       element,
-      tileSources: `/iiif/${source.imageId}~${source.revision}/info.json`,
       drawer: ['webgl', 'canvas'],
       showNavigationControl: false,
       tabIndex: -1,
@@ -65,11 +65,30 @@ export class OpenPicture {
     this.viewer.addHandler('animation-finish', () => this.settle());
     this.viewer.addHandler('update-viewport', () => this.draw());
     this.viewer.addHandler('resize', () => this.draw());
+    void this.load();
   }
 
   close(): void {
+    this.closed = true;
     this.frame.complete();
     this.viewer.destroy();
+  }
+
+  /**
+   * The information document is read here and told its own address: what it states as its id is the public
+   * one, and tiles from another origin (another name of the same machine) could not be drawn by WebGL.
+   */
+  private async load(): Promise<void> {
+    const address = new URL(`/iiif/${this.source.imageId}~${this.source.revision}`, this.element.ownerDocument.baseURI)
+      .href;
+    try {
+      const answer = await fetch(`${address}/info.json`);
+      if (!answer.ok) throw new Error(`info.json: ${answer.status}`);
+      const information: object = { ...((await answer.json()) as object), id: address };
+      if (!this.closed) this.viewer.open(information);
+    } catch {
+      this.hasFailed.set(true); // no connection, or not to be seen any more: the page around it says which
+    }
   }
 
   /** The whole picture. */

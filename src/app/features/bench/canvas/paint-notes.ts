@@ -32,9 +32,12 @@ export function paintNotes(
 ): ReadonlyMap<string, Box> {
   const seen = notes.filter(({ note }) => isSeen(note.geometry, viewport));
   const shapes = seen.filter(({ edited }) => !edited);
+  // of a whole body at rest its ellipse tells enough; the two lines are faint, so that it can be seen itself
+  const atRest = shapes.filter(({ note, strong }) => !strong && bodyEllipse(note.geometry) !== null);
+  paintFaintly(context, viewport, atRest);
   paintEllipses(context, viewport, shapes);
   for (const strong of [false, true]) {
-    const some = shapes.filter((one) => one.strong === strong);
+    const some = shapes.filter((one) => one.strong === strong && !atRest.includes(one));
     if (some.length === 0) continue;
     context.beginPath();
     for (const { note } of some) tracePath(context, viewport, note.geometry);
@@ -44,13 +47,21 @@ export function paintNotes(
   return paintLabels(context, viewport, seen);
 }
 
-function paintEllipses(context: CanvasRenderingContext2D, viewport: Viewport, shapes: readonly PaintedNote[]): void {
+function paintFaintly(context: CanvasRenderingContext2D, viewport: Viewport, shapes: readonly PaintedNote[]): void {
   context.save();
   context.beginPath();
-  for (const { note } of shapes) traceEllipse(context, viewport, note.geometry);
-  context.globalAlpha = 0.7;
-  strokeHemmed(context, 1);
+  for (const { note } of shapes) tracePath(context, viewport, note.geometry);
+  context.globalAlpha = 0.5;
+  context.lineWidth = 1;
+  context.strokeStyle = MARK;
+  context.stroke();
   context.restore();
+}
+
+function paintEllipses(context: CanvasRenderingContext2D, viewport: Viewport, shapes: readonly PaintedNote[]): void {
+  context.beginPath();
+  for (const { note } of shapes) traceEllipse(context, viewport, note.geometry);
+  strokeHemmed(context, 1.25);
 }
 
 function traceEllipse(context: CanvasRenderingContext2D, viewport: Viewport, geometry: NoteGeometry): void {
