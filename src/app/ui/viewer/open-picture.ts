@@ -84,8 +84,9 @@ export class OpenPicture {
     try {
       const answer = await fetch(`${address}/info.json`);
       if (!answer.ok) throw new Error(`info.json: ${answer.status}`);
-      const information: object = { ...((await answer.json()) as object), id: address };
-      if (!this.closed) this.viewer.open(information);
+      const information = { ...((await answer.json()) as object), id: address };
+      // as text: the viewer then recognises the kind of document by itself
+      if (!this.closed) this.viewer.open(JSON.stringify(information));
     } catch {
       this.hasFailed.set(true); // no connection, or not to be seen any more: the page around it says which
     }
