@@ -30,11 +30,9 @@ export class ImageSurroundingsTable {
     const { read } = this.db;
     const owner = (await read('users').where({ id: image.ownerId }).first('id', 'name')) as ImageView['owner'];
     const preparation = (await read('preparations').where({ id: image.preparationId }).first('id', 'title')) as
-      | { id: string; title: string }
-      | undefined;
+      { id: string; title: string } | undefined;
     const setting = (await read('settings').where({ id: image.settingId }).first('numerical_aperture')) as
-      | { numerical_aperture: number | null }
-      | undefined;
+      { numerical_aperture: number | null } | undefined;
     return {
       owner,
       find: image.observationId === null ? null : await this.find(image.observationId),
@@ -46,8 +44,7 @@ export class ImageSurroundingsTable {
   /** the observation that a preparation belongs to; null when there is none */
   async observationOf(preparationId: string): Promise<string | null> {
     const row = (await this.db.read('preparations').where({ id: preparationId }).first('observation_id')) as
-      | { observation_id: string }
-      | undefined;
+      { observation_id: string } | undefined;
     return row?.observation_id ?? null;
   }
 
@@ -58,7 +55,13 @@ export class ImageSurroundingsTable {
       .leftJoin('determinations', 'determinations.id', 'finds.standing_id')
       .where('observations.id', observationId)
       .select('finds.id', 'finds.prefix', 'finds.number', 'finds.fruit_bodies')
-      .select('determinations.name', 'determinations.authorship', 'determinations.rank', 'determinations.code', 'determinations.qualifier')
+      .select(
+        'determinations.name',
+        'determinations.authorship',
+        'determinations.rank',
+        'determinations.code',
+        'determinations.qualifier',
+      )
       .first()) as FindColumns;
     const { name, authorship, rank, code, qualifier } = row;
     return {

@@ -80,25 +80,37 @@ export class JobTable {
   }
 
   async finish(id: string, now: string): Promise<void> {
-    await this.db.write<Row>('jobs').where({ id }).update({ state: 'done', leased_until: null, last_error: null, finished_at: now });
+    await this.db
+      .write<Row>('jobs')
+      .where({ id })
+      .update({ state: 'done', leased_until: null, last_error: null, finished_at: now });
   }
 
   /** Waits for its next attempt. */
   async postpone(id: string, error: string, runAfter: string): Promise<void> {
-    await this.db.write<Row>('jobs').where({ id }).update({ state: 'waiting', leased_until: null, last_error: error, run_after: runAfter });
+    await this.db
+      .write<Row>('jobs')
+      .where({ id })
+      .update({ state: 'waiting', leased_until: null, last_error: error, run_after: runAfter });
   }
 
   /** Gives it up; `alongside` writes, in the same transaction, what that means for what it worked on. */
   async giveUp(id: string, error: string, now: string, alongside?: (trx: Knex) => Promise<void>): Promise<void> {
     await this.db.write.transaction(async (trx) => {
-      await trx<Row>('jobs').where({ id }).update({ state: 'failed', leased_until: null, last_error: error, finished_at: now });
+      await trx<Row>('jobs')
+        .where({ id })
+        .update({ state: 'failed', leased_until: null, last_error: error, finished_at: now });
       await alongside?.(trx);
     });
   }
 
   /** Back to waiting as if it had not been begun: the server stops, the job did nothing wrong. */
   async putBack(id: string): Promise<void> {
-    await this.db.write<Row>('jobs').where({ id }).update({ state: 'waiting', leased_until: null }).decrement('attempts', 1);
+    await this.db
+      .write<Row>('jobs')
+      .where({ id })
+      .update({ state: 'waiting', leased_until: null })
+      .decrement('attempts', 1);
   }
 
   /** After a restart: whatever was being worked on is not any more. Its attempt counts, for it may have been the cause. */
@@ -118,7 +130,12 @@ export class JobTable {
 
   /** When the next waiting job is due; null when none waits. */
   async nextDue(kinds: readonly string[]): Promise<string | null> {
-    const row = await this.db.read<Row>('jobs').whereIn('kind', [...kinds]).where({ state: 'waiting' }).min({ at: 'run_after' }).first();
+    const row = await this.db
+      .read<Row>('jobs')
+      .whereIn('kind', [...kinds])
+      .where({ state: 'waiting' })
+      .min({ at: 'run_after' })
+      .first();
     return (row as { at: string | null } | undefined)?.at ?? null;
   }
 

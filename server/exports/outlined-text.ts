@@ -39,7 +39,12 @@ export function outlineText(text: string, size: number): OutlinedText {
     glyphs.forEach((glyph, i) => {
       const { xAdvance = 0, xOffset = 0, yOffset = 0 } = positions[i] ?? {};
       // font units run upwards
-      paths.push(glyph.path.scale(scale, -scale).translate(x + xOffset * scale, -yOffset * scale).toSVG());
+      paths.push(
+        glyph.path
+          .scale(scale, -scale)
+          .translate(x + xOffset * scale, -yOffset * scale)
+          .toSVG(),
+      );
       x += xAdvance * scale;
     });
   }
@@ -55,7 +60,8 @@ function runsOf(text: string): { font: Font; run: string }[] {
   const runs: { font: Font; run: string }[] = [];
   for (const character of text) {
     const font = fontFor(character);
-    if (!font) throw new Error(`No bundled font has a glyph for ${character} (U+${character.codePointAt(0)?.toString(16)}).`);
+    if (!font)
+      throw new Error(`No bundled font has a glyph for ${character} (U+${character.codePointAt(0)?.toString(16)}).`);
     const last = runs[runs.length - 1];
     if (last?.font === font) last.run += character;
     else runs.push({ font, run: character });

@@ -11,7 +11,8 @@ export function pictureName(input: {
   readonly format: 'jpeg' | 'png';
 }): string {
   const { findNumber, taxon, title, originalName, width, format } = input;
-  const words = slug(taxon ?? '') || slug(title) || (findNumber ? '' : slug(originalName.replace(/\.[^.]*$/, '')) || 'picture');
+  const words =
+    slug(taxon ?? '') || slug(title) || (findNumber ? '' : slug(originalName.replace(/\.[^.]*$/, '')) || 'picture');
   return `${[findNumber, words, width].filter((part) => part !== null && part !== '').join('-')}.${format === 'jpeg' ? 'jpg' : 'png'}`;
 }
 

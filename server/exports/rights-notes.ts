@@ -10,7 +10,8 @@ export interface RightsNotes {
 export function rightsNotes(creditLine: string, licence: Licence): RightsNotes {
   const uri = licenceUri(licence);
   const words = uri === null ? `© ${creditLine}. All rights reserved.` : `© ${creditLine}. ${uri}`;
-  const statement = uri === null ? '' : `<xmpRights:WebStatement>${uri}</xmpRights:WebStatement><cc:license rdf:resource="${uri}"/>`;
+  const statement =
+    uri === null ? '' : `<xmpRights:WebStatement>${uri}</xmpRights:WebStatement><cc:license rdf:resource="${uri}"/>`;
   return {
     // Exif text is ASCII by its standard; what is not is told by the XMP beside it
     exif: { Artist: ascii(creditLine), Copyright: ascii(words) },

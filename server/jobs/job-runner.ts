@@ -99,7 +99,9 @@ export class JobRunner {
   private async beginDue(): Promise<number> {
     const { jobs, clock } = this.options;
     for (let begun = 0; ; begun++) {
-      const kinds = [...this.running].filter(([kind, set]) => set.size < (this.options.atOnce?.[kind] ?? 1)).map(([kind]) => kind);
+      const kinds = [...this.running]
+        .filter(([kind, set]) => set.size < (this.options.atOnce?.[kind] ?? 1))
+        .map(([kind]) => kind);
       if (kinds.length === 0 || this.stopping.signal.aborted) return begun;
       const now = clock.now();
       const job = await jobs.lease(kinds, now.toISOString(), after(now, LEASE_MS));

@@ -32,9 +32,14 @@ export class Arrivals {
    * Brings in a file from elsewhere; it stays where it is.
    * @returns the id of the new picture, which waits for its intake
    */
-  async bringIn(input: { readonly file: string | Buffer; readonly name: string; readonly ownerId: string }): Promise<string> {
+  async bringIn(input: {
+    readonly file: string | Buffer;
+    readonly name: string;
+    readonly ownerId: string;
+  }): Promise<string> {
     const { files } = this.options;
-    if (typeof input.file === 'string') return this.arrive({ id: newId(), path: input.file, name: input.name, ownerId: input.ownerId });
+    if (typeof input.file === 'string')
+      return this.arrive({ id: newId(), path: input.file, name: input.name, ownerId: input.ownerId });
     const path = join(files.uploads, `${randomUUID()}.whole`);
     await writeFile(path, input.file);
     try {
@@ -48,7 +53,12 @@ export class Arrivals {
    * Keeps the file at `path` as the original of the picture `id`. Doing it again for an id that is written
    * down already changes nothing.
    */
-  async arrive(input: { readonly id: string; readonly path: string; readonly name: string; readonly ownerId: string }): Promise<string> {
+  async arrive(input: {
+    readonly id: string;
+    readonly path: string;
+    readonly name: string;
+    readonly ownerId: string;
+  }): Promise<string> {
     const { db, images, users, jobTable, originals, clock, nudge } = this.options;
     const { id, path, name, ownerId } = input;
     if (await images.find(id)) return id;

@@ -1,6 +1,10 @@
 import exifr from 'exifr';
 import type { Capture } from '../../shared/contracts/images.js';
-import { pitchAfterDigitalZoom, pitchFromFilmEquivalent, pitchFromFocalPlane } from '../../shared/scale/optics-scale.js';
+import {
+  pitchAfterDigitalZoom,
+  pitchFromFilmEquivalent,
+  pitchFromFocalPlane,
+} from '../../shared/scale/optics-scale.js';
 
 export interface CaptureNotes {
   readonly capture: Capture;
@@ -22,7 +26,10 @@ const LIKELY_PITCH_UM = { least: 0.5, most: 30 };
  * @param source a TIFF's path, or the Exif block of another file
  * @param stored its size as stored, px, before it is made upright
  */
-export async function readCaptureNotes(source: string | Buffer, stored: { width: number; height: number }): Promise<CaptureNotes> {
+export async function readCaptureNotes(
+  source: string | Buffer,
+  stored: { width: number; height: number },
+): Promise<CaptureNotes> {
   const input = typeof source === 'string' ? source : withoutExifHead(source);
   try {
     const tags = (await exifr.parse(input, OPTIONS)) as Tags | undefined;
@@ -126,7 +133,10 @@ function place(tags: Tags): CaptureNotes['exactPlace'] {
 
 function text(value: unknown): string | null {
   if (typeof value !== 'string') return null;
-  const clean = value.replace(/[\p{Cc}\s]+/gu, ' ').trim().slice(0, 120);
+  const clean = value
+    .replace(/[\p{Cc}\s]+/gu, ' ')
+    .trim()
+    .slice(0, 120);
   return clean === '' ? null : clean;
 }
 

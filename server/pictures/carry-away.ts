@@ -21,7 +21,10 @@ export async function carryAway(input: {
   readonly rights: RightsNotes;
 }): Promise<Buffer> {
   const { access, levels, size, format, overlay, rights } = input;
-  const page = Math.max(0, levels.findLastIndex((level) => level.width >= size.width));
+  const page = Math.max(
+    0,
+    levels.findLastIndex((level) => level.width >= size.width),
+  );
   let picture = sharp(access, { page }).resize({ ...size, fit: 'fill' });
   if (overlay) {
     // a bar on a very small copy may be larger than the copy itself: what does not fit is cut off
@@ -37,7 +40,8 @@ export async function carryAway(input: {
     picture = picture.composite([{ input: drawn, left: overlay.left, top: overlay.top }]);
   }
   picture = picture.withExif({ IFD0: { ...rights.exif } }).withXmp(rights.xmp);
-  const encoded = format === 'jpeg' ? picture.jpeg({ quality: JPEG_QUALITY, chromaSubsampling: '4:4:4' }) : picture.png();
+  const encoded =
+    format === 'jpeg' ? picture.jpeg({ quality: JPEG_QUALITY, chromaSubsampling: '4:4:4' }) : picture.png();
   return encoded.timeout({ seconds: TIMEOUT_S }).toBuffer();
 }
 

@@ -45,7 +45,10 @@ export function runInChild(task: ChildTask, limits: ChildLimits, signal?: AbortS
       running.kill('SIGKILL');
     };
     const clock = setTimeout(() => {
-      end({ done: 'refused', refusal: { code: 'took-too-long', parameters: { seconds: Math.round(limits.timeMs / 1000) } } });
+      end({
+        done: 'refused',
+        refusal: { code: 'took-too-long', parameters: { seconds: Math.round(limits.timeMs / 1000) } },
+      });
     }, limits.timeMs);
     const scales = setInterval(() => {
       void memoryOf(running.pid).then((bytes) => {

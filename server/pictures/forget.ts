@@ -7,7 +7,11 @@ import type { PictureFiles } from './picture-files.js';
  * Removes the files of a picture that was discarded; its original only when no other picture has it. A job,
  * enqueued with the discarding, so that a cut in between leaves nothing behind.
  */
-export function forgetFiles(images: ImageTable, files: PictureFiles, originals: Originals): (job: Job) => Promise<void> {
+export function forgetFiles(
+  images: ImageTable,
+  files: PictureFiles,
+  originals: Originals,
+): (job: Job) => Promise<void> {
   return async ({ about: id, payload }) => {
     const { sha256 } = payload as { sha256: string };
     await files.forgetMade(id);

@@ -13,11 +13,7 @@ type Size = IiifRequest['size'];
  *
  * @param access path of the access copy; @param levels its pages, largest first
  */
-export async function renderIiif(
-  access: string,
-  levels: readonly Size[],
-  request: IiifRequest,
-): Promise<Buffer> {
+export async function renderIiif(access: string, levels: readonly Size[], request: IiifRequest): Promise<Buffer> {
   const { page, crop } = choosePage(levels, request.region, request.size);
   let picture = sharp(access, { page })
     .extract(crop)
@@ -42,7 +38,8 @@ export function choosePage(
   for (let page = levels.length - 1; page > 0; page--) {
     const factor = 2 ** page;
     if (factor > reduction) continue;
-    const onWhole = [region.x, region.y].every((edge) => edge % factor === 0) &&
+    const onWhole =
+      [region.x, region.y].every((edge) => edge % factor === 0) &&
       wholeOrEdge(region.x + region.width, full.width, factor) &&
       wholeOrEdge(region.y + region.height, full.height, factor);
     if (onWhole || factor * 4 <= reduction) return { page, crop: cropOf(region, factor, levels[page] as Size) };
@@ -55,7 +52,11 @@ function wholeOrEdge(end: number, whole: number, factor: number): boolean {
 }
 
 /** In the pixels of a page; libvips halves each level and drops an odd last row, so the far edge is held. */
-function cropOf(region: Region, factor: number, level: Size): { left: number; top: number; width: number; height: number } {
+function cropOf(
+  region: Region,
+  factor: number,
+  level: Size,
+): { left: number; top: number; width: number; height: number } {
   const left = Math.min(Math.round(region.x / factor), level.width - 1);
   const top = Math.min(Math.round(region.y / factor), level.height - 1);
   const right = Math.min(Math.round((region.x + region.width) / factor), level.width);
@@ -71,7 +72,13 @@ async function turned(picture: Sharp, { mirrored, rotation }: IiifRequest): Prom
   return fromRaw(flopped).rotate(rotation);
 }
 
-function fromRaw({ data, info }: { data: Buffer; info: { width: number; height: number; channels: 1 | 2 | 3 | 4 } }): Sharp {
+function fromRaw({
+  data,
+  info,
+}: {
+  data: Buffer;
+  info: { width: number; height: number; channels: 1 | 2 | 3 | 4 };
+}): Sharp {
   return sharp(data, { raw: { width: info.width, height: info.height, channels: info.channels } });
 }
 

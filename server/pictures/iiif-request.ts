@@ -63,7 +63,11 @@ function parseRegion(text: string, { width, height }: Size): IiifRequest['region
   if (!percent) throw bad('region', text);
   // both edges are rounded, so that regions side by side neither overlap nor leave a gap
   const at = (share: number, whole: number) => Math.round((share / 100) * whole);
-  return cropTo({ x: at(x, width), y: at(y, height), right: at(x + w, width), bottom: at(y + h, height) }, { width, height }, text);
+  return cropTo(
+    { x: at(x, width), y: at(y, height), right: at(x + w, width), bottom: at(y + h, height) },
+    { width, height },
+    text,
+  );
 }
 
 function cropTo(
@@ -100,8 +104,10 @@ function sizeOf(text: string, region: Size, upscales: boolean, maxArea: number):
     return confined ? confine(asked, region, upscales, maxArea) : asked;
   }
   if (confined) return null;
-  if (w !== undefined) return { width: Number(w), height: Math.max(1, Math.round((Number(w) * region.height) / region.width)) };
-  if (h !== undefined) return { width: Math.max(1, Math.round((Number(h) * region.width) / region.height)), height: Number(h) };
+  if (w !== undefined)
+    return { width: Number(w), height: Math.max(1, Math.round((Number(w) * region.height) / region.width)) };
+  if (h !== undefined)
+    return { width: Math.max(1, Math.round((Number(h) * region.width) / region.height)), height: Number(h) };
   return null;
 }
 

@@ -64,7 +64,8 @@ async function answer(task: ChildTask): Promise<ChildAnswer> {
     await portray(task);
     return { done: 'portrait' };
   } catch (error) {
-    if (error instanceof Refused) return { done: 'refused', refusal: { code: error.code, parameters: error.parameters } };
+    if (error instanceof Refused)
+      return { done: 'refused', refusal: { code: error.code, parameters: error.parameters } };
     throw error;
   }
 }

@@ -54,7 +54,8 @@ function orientationOf(value: number | undefined): Orientation {
 
 /** Float and 32-bit TIFF have no agreed way to be shown, and pictures of more than four bands are not photographs. */
 function bitDepthOf({ format, depth, channels }: Metadata): 8 | 16 {
-  if (depth !== 'uchar' && depth !== 'ushort') throw new Refused('type-not-accepted', { found: `${format.toUpperCase()}, ${depth}` });
+  if (depth !== 'uchar' && depth !== 'ushort')
+    throw new Refused('type-not-accepted', { found: `${format.toUpperCase()}, ${depth}` });
   if (channels > 5) throw new Refused('type-not-accepted', { found: `${format.toUpperCase()}, ${channels} channels` });
   return depth === 'ushort' ? 16 : 8;
 }

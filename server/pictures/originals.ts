@@ -62,7 +62,8 @@ async function linkOrCopy(path: string, target: string): Promise<void> {
     await link(path, target);
   } catch (error) {
     // some file systems know no second names: copy beside, then rename, so that half a file is never seen
-    if (!['EPERM', 'ENOTSUP', 'EOPNOTSUPP', 'ENOSYS', 'EMLINK'].includes((error as NodeJS.ErrnoException).code ?? '')) throw error;
+    if (!['EPERM', 'ENOTSUP', 'EOPNOTSUPP', 'ENOSYS', 'EMLINK'].includes((error as NodeJS.ErrnoException).code ?? ''))
+      throw error;
     const beside = `${target}.part`;
     await copyFile(path, beside);
     await sync(beside);

@@ -24,7 +24,10 @@ sharp.cache(false);
 /** Cuts pictures out of access copies, which are Motebook's own files: a few at a time, and remembers tiles. */
 export class PictureServer {
   private readonly queue = new PQueue({ concurrency: AT_ONCE });
-  private readonly tiles = new LRUCache<string, Buffer>({ maxSize: CACHE_BYTES, sizeCalculation: (tile) => tile.length || 1 });
+  private readonly tiles = new LRUCache<string, Buffer>({
+    maxSize: CACHE_BYTES,
+    sizeCalculation: (tile) => tile.length || 1,
+  });
   private readonly known = new LRUCache<string, readonly { width: number; height: number }[]>({ max: 2000 });
 
   constructor(private readonly files: PictureFiles) {}

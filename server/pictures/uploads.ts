@@ -135,7 +135,8 @@ export class Uploads {
     const notes = await this.notes(id);
     if (!notes) return; // finished before
     const path = join(files.uploads, id);
-    if ((await this.arrived(id)) !== null) await arrivals.arrive({ id, path, name: notes.name, ownerId: notes.ownerId });
+    if ((await this.arrived(id)) !== null)
+      await arrivals.arrive({ id, path, name: notes.name, ownerId: notes.ownerId });
     else if (!(await images.find(id))) throw new NotFound('upload');
     // the picture is written down and has the bytes under their own name
     await rm(path, { force: true });
@@ -159,7 +160,10 @@ export class Uploads {
 
   private async noted(): Promise<string[]> {
     const names = await readdir(this.options.files.uploads);
-    return names.filter((name) => name.endsWith('.json')).map((name) => name.slice(0, -'.json'.length)).sort();
+    return names
+      .filter((name) => name.endsWith('.json'))
+      .map((name) => name.slice(0, -'.json'.length))
+      .sort();
   }
 
   /** null for none, and for notes that a cut left torn: nothing of such an upload was acknowledged */

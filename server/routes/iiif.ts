@@ -50,7 +50,13 @@ export function mountIiif(mount: Mount, options: IiifOptions): void {
       res.set({ 'Access-Control-Allow-Origin': '*', 'Cross-Origin-Resource-Policy': 'cross-origin' });
     }
     res.set('Vary', 'Accept');
-    res.set('ETag', `"${createHash('sha256').update(`${image.revision} ${image.licence} ${req.path} ${accepts(req)}`).digest('base64url').slice(0, 22)}"`);
+    res.set(
+      'ETag',
+      `"${createHash('sha256')
+        .update(`${image.revision} ${image.licence} ${req.path} ${accepts(req)}`)
+        .digest('base64url')
+        .slice(0, 22)}"`,
+    );
     if (!req.fresh) return false;
     res.status(304).end();
     return true;
@@ -61,9 +67,18 @@ export function mountIiif(mount: Mount, options: IiifOptions): void {
     if (await known(req, res, image, params)) return;
     const name = params['revision'] === undefined ? image.id : `${image.id}~${image.revision}`;
     const { width, height, licence } = image;
-    const body = iiifInfo({ id: `${publicUrl}/iiif/${name}`, width, height, licence, levels: await pictures.levels(image) });
+    const body = iiifInfo({
+      id: `${publicUrl}/iiif/${name}`,
+      width,
+      height,
+      licence,
+      levels: await pictures.levels(image),
+    });
     // bytes, so that Express adds no character set: JSON has none
-    res.setHeader('Content-Type', accepts(req) === 'ld' ? `application/ld+json;profile="${PROFILE}"` : 'application/json');
+    res.setHeader(
+      'Content-Type',
+      accepts(req) === 'ld' ? `application/ld+json;profile="${PROFILE}"` : 'application/json',
+    );
     res.send(Buffer.from(JSON.stringify(body)));
   };
 

@@ -13,7 +13,11 @@ const FOR_EVER = 'max-age=31536000, immutable';
 const FOR_A_DAY = 'max-age=86400';
 
 /** How long an answer that never changes may be kept, and by whom. */
-export async function cacheControl(things: ThingTable, clock: Clock, imageId: string): Promise<{ public: boolean; header: string }> {
+export async function cacheControl(
+  things: ThingTable,
+  clock: Clock,
+  imageId: string,
+): Promise<{ public: boolean; header: string }> {
   const thing = await things.load('image', imageId);
   const isPublic = thing?.kind === 'image' && can(VISITOR, 'image.read', thing, today(clock));
   return { public: isPublic, header: isPublic ? `public, ${FOR_EVER}` : `private, ${FOR_A_DAY}` };

@@ -10,12 +10,18 @@ import { UPLOAD_PATH, type Uploads } from '../pictures/uploads.js';
  * with it, HEAD tells how far it came, DELETE drops it. All but HEAD need the XSRF header; an upload exists
  * only for the person who made it.
  */
-export function mountUploads(app: Express, { uploads, maxBytes, clock }: { uploads: Uploads; maxBytes: number; clock: Clock }): void {
+export function mountUploads(
+  app: Express,
+  { uploads, maxBytes, clock }: { uploads: Uploads; maxBytes: number; clock: Clock },
+): void {
   app.all(`${UPLOAD_PATH}{/:uploadId}`, async (req, res) => {
     const actor = actorOf(req);
-    if (actor.kind !== 'user' || !can(actor, 'site.contribute', { kind: 'site' }, today(clock))) throw new NotSignedIn();
+    if (actor.kind !== 'user' || !can(actor, 'site.contribute', { kind: 'site' }, today(clock)))
+      throw new NotSignedIn();
     if (Number(req.get('Upload-Length') ?? 0) > maxBytes) {
-      throw new HttpProblem(413, 'too-large', 'The file is larger than accepted.', { mostMegabytes: Math.floor(maxBytes / 1024 ** 2) });
+      throw new HttpProblem(413, 'too-large', 'The file is larger than accepted.', {
+        mostMegabytes: Math.floor(maxBytes / 1024 ** 2),
+      });
     }
     const { uploadId } = req.params as { uploadId?: string };
     const arrived = uploadId === undefined ? null : await uploads.whole(uploadId, actor.id);

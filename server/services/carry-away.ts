@@ -28,7 +28,8 @@ export class CarryAwayService {
     const { scales, surroundings, pictures, files } = this.options;
     const size = copySize(image, query.width, WIDEST_PX);
     const version = image.currentScaleId === null ? null : await scales.find(image.currentScaleId);
-    const overlay = query.bar === 'on' ? scaleBarOverlay({ picture: size, original: image, scale: version?.scale ?? null }) : null;
+    const overlay =
+      query.bar === 'on' ? scaleBarOverlay({ picture: size, original: image, scale: version?.scale ?? null }) : null;
     const { find } = await surroundings.of(image);
     const levels = await pictures.levels(image);
     const bytes = await pictures.inQueue(

@@ -84,7 +84,15 @@ export class ScaleService {
   private async append(trx: Knex.Transaction, imageId: string, personId: string, found: Found): Promise<void> {
     const { scales, images, clock, onNewScale } = this.options;
     const { scale, provenance, calibrationId, settingId } = found;
-    const version: ImageScale = { id: newId(), imageId, scale, provenance, calibrationId, setBy: personId, setAt: instant(clock) };
+    const version: ImageScale = {
+      id: newId(),
+      imageId,
+      scale,
+      provenance,
+      calibrationId,
+      setBy: personId,
+      setAt: instant(clock),
+    };
     await scales.insert(version, trx);
     await images.setScale(imageId, version.id, settingId, trx);
     await onNewScale(trx, imageId, version);
@@ -110,7 +118,11 @@ export class ScaleService {
     }
   }
 
-  private async bySetting(image: ReadyImage, person: User, input: Extract<SetScale, { by: 'setting' }>): Promise<Found> {
+  private async bySetting(
+    image: ReadyImage,
+    person: User,
+    input: Extract<SetScale, { by: 'setting' }>,
+  ): Promise<Found> {
     const { rigs, calibrations, clock } = this.options;
     const setting = await rigs.setting(input.settingId);
     const rig = setting && (await rigs.find(setting.rigId));
@@ -119,7 +131,8 @@ export class ScaleService {
     const calibration =
       (await calibrations.valid(setting.id, instant(clock))) ??
       (await calibrations.valid(setting.id, captureInstant(image) ?? instant(clock)));
-    if (!calibration) throw new Conflict('no-calibration', 'No calibration of this setting holds now.', { setting: setting.name });
+    if (!calibration)
+      throw new Conflict('no-calibration', 'No calibration of this setting holds now.', { setting: setting.name });
     const { scale, reducedBy } = fitToSize(image, calibration, input.sizeAnswer);
     return calibrated({ calibration, setting, rig }, scale, reducedBy);
   }
@@ -168,10 +181,15 @@ function fitToSize(
   if (width === frameWidth && height === frameHeight) return { scale, reducedBy: 1 };
   const sizes = { width, height, frameWidth, frameHeight };
   if (answer === undefined) {
-    throw new Conflict('reduced-or-cropped', `Has ${width} × ${height} px, the frame ${frameWidth} × ${frameHeight}.`, sizes);
+    throw new Conflict(
+      'reduced-or-cropped',
+      `Has ${width} × ${height} px, the frame ${frameWidth} × ${frameHeight}.`,
+      sizes,
+    );
   }
   if (answer === 'cropped') {
-    if (width > frameWidth || height > frameHeight) throw impossible('larger-than-frame', 'A crop is not larger than its frame.');
+    if (width > frameWidth || height > frameHeight)
+      throw impossible('larger-than-frame', 'A crop is not larger than its frame.');
     return { scale: scaleAfterCrop(scale), reducedBy: 1 };
   }
   // rounding to whole pixels may move either side by up to one
@@ -191,7 +209,9 @@ function byReference(input: Extract<SetScale, { by: 'reference' }>): Found {
   const { a, b, objectId } = input;
   const object = objectId === null ? null : knownObject(objectId);
   if (objectId !== null && !object) {
-    throw new Invalid([{ pointer: '#/objectId', code: 'unknown-object', detail: 'There is no such object of known size.' }]);
+    throw new Invalid([
+      { pointer: '#/objectId', code: 'unknown-object', detail: 'There is no such object of known size.' },
+    ]);
   }
   const lengthUm = object?.lengthMm ? object.lengthMm * 1000 : input.lengthUm;
   const toleranceUm = object ? object.toleranceMm * 1000 : input.toleranceUm;

@@ -50,7 +50,11 @@ interface Box {
 }
 
 async function greys(bytes: Buffer): Promise<Greys> {
-  const { data, info } = await sharp(bytes).removeAlpha().toColourspace('b-w').raw().toBuffer({ resolveWithObject: true });
+  const { data, info } = await sharp(bytes)
+    .removeAlpha()
+    .toColourspace('b-w')
+    .raw()
+    .toBuffer({ resolveWithObject: true });
   return { values: data, width: info.width, height: info.height };
 }
 

@@ -24,7 +24,9 @@ async function photograph(): Promise<Buffer> {
       data[i + 2] = Math.max(0, Math.min(255, base * 0.7));
     }
   }
-  return sharp(data, { raw: { width: WIDTH, height: HEIGHT, channels: 3 } }).png().toBuffer();
+  return sharp(data, { raw: { width: WIDTH, height: HEIGHT, channels: 3 } })
+    .png()
+    .toBuffer();
 }
 
 /**
@@ -33,7 +35,7 @@ async function photograph(): Promise<Buffer> {
  */
 const KINDS = [
   { grounds: 'calibrated', umPerPx: 0.25, barUm: 100 }, // field 500.75, quarter 125.2
-  { grounds: 'referenced', umPerPx: 21.25 * 1000 / 850, barUm: 10_000 }, // 25 µm/px: field 50.075 mm, quarter 12.5 mm
+  { grounds: 'referenced', umPerPx: (21.25 * 1000) / 850, barUm: 10_000 }, // 25 µm/px: field 50.075 mm, quarter 12.5 mm
   { grounds: 'estimated', umPerPx: 0.1725, barUm: 50 }, // 3.45/(40 × 0.5): field 345.5, quarter 86.4
 ] as const;
 const SIZES = [2003, 1333, 641];
@@ -59,17 +61,40 @@ describe('the drawn-in bar', () => {
     const a = { x: 100, y: 200 };
     if (grounds === 'referenced') {
       // a 5 cent coin, 21.25 mm, across 850 px
-      await browser.post(`/api/images/${id}/scales`, { by: 'reference', a, b: { x: 950, y: 200 }, objectId: 'euro-0.05' }).expect(200);
+      await browser
+        .post(`/api/images/${id}/scales`, { by: 'reference', a, b: { x: 950, y: 200 }, objectId: 'euro-0.05' })
+        .expect(200);
     } else if (grounds === 'estimated') {
-      await browser.post(`/api/images/${id}/scales`, { by: 'optics', pixelPitchUm: 3.45, magnification: 40, relay: 0.5, binning: 1 }).expect(200);
+      await browser
+        .post(`/api/images/${id}/scales`, {
+          by: 'optics',
+          pixelPitchUm: 3.45,
+          magnification: 40,
+          relay: 0.5,
+          binning: 1,
+        })
+        .expect(200);
     } else {
-      const rig = (await browser.post('/api/rigs', { name: 'Old brass', camera: '', remarks: '' }).expect(200)).body as { id: string };
-      const named = { name: '40×', objective: '', magnification: 40, numericalAperture: 0.65, oneSitting: false, captureMode: '' };
+      const rig = (await browser.post('/api/rigs', { name: 'Old brass', camera: '', remarks: '' }).expect(200))
+        .body as { id: string };
+      const named = {
+        name: '40×',
+        objective: '',
+        magnification: 40,
+        numericalAperture: 0.65,
+        oneSitting: false,
+        captureMode: '',
+      };
       const setting = (await browser.post(`/api/rigs/${rig.id}/settings`, named).expect(200)).body as { id: string };
       // graduations of 10 µm, 40 px apart: 0.25 µm/px
       const marks = Array.from({ length: 40 }, (_, index) => ({ at: { x: 100 + 40 * index, y: 300 }, index }));
       await browser
-        .post(`/api/rigs/${rig.id}/settings/${setting.id}/calibrations`, { imageId: id, marks, spacingUm: 10, toleranceUm: 1.5 })
+        .post(`/api/rigs/${rig.id}/settings/${setting.id}/calibrations`, {
+          imageId: id,
+          marks,
+          spacingUm: 10,
+          toleranceUm: 1.5,
+        })
         .expect(200);
     }
     expect((await browser.get(`/api/images/${id}`)).body).toMatchObject({ currentScale: { grounds } });
@@ -80,19 +105,22 @@ describe('the drawn-in bar', () => {
     process.stdout.write(`Worst drawn-in bar: off by ${worst.toFixed(3)} px.\n`);
   });
 
-  it.each(KINDS)('is right to half a pixel when $grounds, at three sizes, as JPEG and as PNG', async ({ grounds, umPerPx, barUm }) => {
-    await setScale(grounds);
-    for (const width of SIZES) {
-      for (const format of ['jpeg', 'png']) {
-        const query = `width=${width}&format=${format}`;
-        const reading = await readBar(await download(query), await download(`${query}&bar=off`));
-        const expected = ((barUm / umPerPx) * width) / WIDTH;
-        const off = Math.abs((reading?.lengthPx ?? Infinity) - expected);
-        worst = Math.max(worst, off);
-        expect({ grounds, width, format, off: off < 0.5 }).toEqual({ grounds, width, format, off: true });
+  it.each(KINDS)(
+    'is right to half a pixel when $grounds, at three sizes, as JPEG and as PNG',
+    async ({ grounds, umPerPx, barUm }) => {
+      await setScale(grounds);
+      for (const width of SIZES) {
+        for (const format of ['jpeg', 'png']) {
+          const query = `width=${width}&format=${format}`;
+          const reading = await readBar(await download(query), await download(`${query}&bar=off`));
+          const expected = ((barUm / umPerPx) * width) / WIDTH;
+          const off = Math.abs((reading?.lengthPx ?? Infinity) - expected);
+          worst = Math.max(worst, off);
+          expect({ grounds, width, format, off: off < 0.5 }).toEqual({ grounds, width, format, off: true });
+        }
       }
-    }
-  });
+    },
+  );
 
   it('is missing where there is no scale, and words say so', async () => {
     await browser.post(`/api/images/${id}/scales`, { by: 'nothing' }).expect(200);
@@ -107,7 +135,10 @@ describe('the drawn-in bar', () => {
     for (const format of ['jpeg', 'png']) {
       const bytes = await download(`width=640&format=${format}`);
       const tags = (await exifr.parse(bytes, { xmp: true, gps: true })) as Record<string, unknown>;
-      expect(tags).toMatchObject({ Artist: 'A photographer', Copyright: '(c) A photographer. http://creativecommons.org/licenses/by/4.0/' });
+      expect(tags).toMatchObject({
+        Artist: 'A photographer',
+        Copyright: '(c) A photographer. http://creativecommons.org/licenses/by/4.0/',
+      });
       const { xmp } = await sharp(bytes).metadata();
       expect(String(xmp)).toContain('xmpRights:WebStatement>http://creativecommons.org/licenses/by/4.0/<');
       expect(tags).not.toHaveProperty('latitude');

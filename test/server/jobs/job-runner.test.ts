@@ -27,7 +27,9 @@ describe('jobs', () => {
   const runner = (handlers: JobRunnerOptions['handlers'], more: Partial<JobRunnerOptions> = {}) =>
     new JobRunner({ jobs, clock, log: pino({ level: 'silent' }), handlers, ...more });
   const enqueue = (about: string, kind = 'walk') =>
-    db.write.transaction((trx) => jobs.enqueue(trx, { kind, about, payload: { about }, now: clock.now().toISOString() }));
+    db.write.transaction((trx) =>
+      jobs.enqueue(trx, { kind, about, payload: { about }, now: clock.now().toISOString() }),
+    );
   const only = async () => (await jobs.list(1))[0];
 
   it('does what was enqueued, in order, once', async () => {

@@ -25,7 +25,10 @@ describe('pictures as pages fetch them', () => {
     for (const visibility of VISIBILITIES) {
       const find = await world.find(owner, { visibility, heldUntil: visibility === 'held' ? '2099-01-01' : null });
       of[visibility] = await bringIn(server, owner, await jpegOf(1400, 1100));
-      await server.db.write('images').where({ id: of[visibility] }).update({ observation_id: await world.observation(find, owner) });
+      await server.db
+        .write('images')
+        .where({ id: of[visibility] })
+        .update({ observation_id: await world.observation(find, owner) });
     }
     ownerBrowser = await server.signIn(owner);
   });
@@ -40,33 +43,65 @@ describe('pictures as pages fetch them', () => {
       [{ kind: 'user', id: other.id, role: 'keeper' }, await server.signIn(other)],
       [{ kind: 'user', id: owner.id, role: 'photographer' }, ownerBrowser],
     ];
-    const parts: Record<string, string> = { revision: '1', region: '0,0,64,64', size: 'max', rotation: '0', file: 'default.jpg' };
+    const parts: Record<string, string> = {
+      revision: '1',
+      region: '0,0,64,64',
+      size: 'max',
+      rotation: '0',
+      file: 'default.jpg',
+    };
     for (const [name, { path }] of Object.entries(deliveryRoutes)) {
       for (const visibility of [...VISIBILITIES, null]) {
         const id = visibility === null ? tray : of[visibility];
         const find: FindThing | null =
-          visibility === null ? null : { kind: 'find', ownerId: owner.id, visibility, heldUntil: visibility === 'held' ? '2099-01-01' : null, placeReaders: [] };
-        const url = path.replace(/:(\w+)/g, (_all, part: string) => (part === 'imageId' ? id : name === 'rendition' && part === 'file' ? '320.webp' : (parts[part] ?? '')));
+          visibility === null
+            ? null
+            : {
+                kind: 'find',
+                ownerId: owner.id,
+                visibility,
+                heldUntil: visibility === 'held' ? '2099-01-01' : null,
+                placeReaders: [],
+              };
+        const url = path.replace(/:(\w+)/g, (_all, part: string) =>
+          part === 'imageId' ? id : name === 'rendition' && part === 'file' ? '320.webp' : (parts[part] ?? ''),
+        );
         for (const [actor, browser] of actors) {
           const may = can(actor, 'image.read', { kind: 'image', ownerId: owner.id, find }, '2026-03-01');
           const { status } = await browser.get(url);
-          expect([url, actor.kind, status]).toEqual([url, actor.kind, may ? (name.startsWith('iiifBase') ? 303 : 200) : 404]);
+          expect([url, actor.kind, status]).toEqual([
+            url,
+            actor.kind,
+            may ? (name.startsWith('iiifBase') ? 303 : 200) : 404,
+          ]);
         }
       }
     }
   });
 
   it('may be kept for ever by everybody when public, and by nobody else’s cache when not', async () => {
-    expect((await open(`/renditions/${of.public}~1/320.webp`)).headers['cache-control']).toBe('public, max-age=31536000, immutable');
-    expect((await open(`/iiif/${of.public}~1/full/100,/0/default.jpg`)).headers['cache-control']).toBe('public, max-age=31536000, immutable');
+    expect((await open(`/renditions/${of.public}~1/320.webp`)).headers['cache-control']).toBe(
+      'public, max-age=31536000, immutable',
+    );
+    expect((await open(`/iiif/${of.public}~1/full/100,/0/default.jpg`)).headers['cache-control']).toBe(
+      'public, max-age=31536000, immutable',
+    );
     expect((await open(`/iiif/${of.public}/info.json`)).headers['cache-control']).toBe('public, no-cache');
-    for (const path of [`/renditions/${of.private}~1/320.webp`, `/iiif/${of.private}~1/info.json`, `/iiif/${of.private}/info.json`]) {
+    for (const path of [
+      `/renditions/${of.private}~1/320.webp`,
+      `/iiif/${of.private}~1/info.json`,
+      `/iiif/${of.private}/info.json`,
+    ]) {
       expect((await open(path, ownerBrowser)).headers['cache-control']).toMatch(/^private/);
     }
   });
 
   it('have no other revision and no other width', async () => {
-    for (const path of [`/renditions/${of.public}~2/320.webp`, `/renditions/${of.public}~1/321.webp`, `/renditions/${of.public}~1/access.tif`]) {
+    for (const path of [
+      `/renditions/${of.public}~2/320.webp`,
+      `/renditions/${of.public}~1/321.webp`,
+      `/renditions/${of.public}~1/access.tif`,
+    ]) {
       expect([path, (await open(path)).status]).toEqual([path, 404]);
     }
     expect((await open(`/renditions/${of.public}~1/..%2f..%2fmotebook.sqlite`)).status).toBe(404);
@@ -88,7 +123,11 @@ describe('pictures as pages fetch them', () => {
         width: 1400,
         height: 1100,
         maxArea: 16_777_216,
-        sizes: [{ width: 350, height: 275 }, { width: 700, height: 550 }, { width: 1400, height: 1100 }],
+        sizes: [
+          { width: 350, height: 275 },
+          { width: 700, height: 550 },
+          { width: 1400, height: 1100 },
+        ],
         tiles: [{ width: 512, height: 512, scaleFactors: [1, 2, 4] }],
         rights: 'http://creativecommons.org/licenses/by/4.0/',
         extraFormats: ['webp'],
@@ -97,12 +136,17 @@ describe('pictures as pages fetch them', () => {
       });
     }
     const linked = await visitor.get(`/iiif/${of.public}/info.json`).set('Accept', 'application/ld+json');
-    expect(linked.headers['content-type']).toContain('application/ld+json;profile="http://iiif.io/api/image/3/context.json"');
+    expect(linked.headers['content-type']).toContain(
+      'application/ld+json;profile="http://iiif.io/api/image/3/context.json"',
+    );
   });
 
   it('send whoever asks for the bare id to its description', async () => {
     const answer = await visitor.get(`/iiif/${of.public}`);
-    expect([answer.status, answer.headers['location']]).toEqual([303, `http://motebook.example/iiif/${of.public}/info.json`]);
+    expect([answer.status, answer.headers['location']]).toEqual([
+      303,
+      `http://motebook.example/iiif/${of.public}/info.json`,
+    ]);
   });
 
   it('are not sent again to those who have them', async () => {
@@ -150,7 +194,9 @@ describe('pictures as pages fetch them', () => {
   it('come in grey and in black and white', async () => {
     const grey = await sharp((await open(`/iiif/${of.public}~1/full/200,/0/gray.png`)).body as Buffer).stats();
     expect(grey.isOpaque && grey.channels.every((channel) => channel.mean === grey.channels[0]!.mean)).toBe(true);
-    const { data } = await sharp((await open(`/iiif/${of.public}~1/full/200,/0/bitonal.png`)).body as Buffer).raw().toBuffer({ resolveWithObject: true });
+    const { data } = await sharp((await open(`/iiif/${of.public}~1/full/200,/0/bitonal.png`)).body as Buffer)
+      .raw()
+      .toBuffer({ resolveWithObject: true });
     expect([...new Set(data)].sort((a, b) => a - b)).toEqual([0, 255]);
   });
 

@@ -6,7 +6,10 @@ import type { HttpProblem } from '../../../server/problem.js';
 /** The picture of the specification's own examples. */
 const PICTURE = { width: 300, height: 200 };
 
-const parse = (parts: { region?: string; size?: string; rotation?: string; file?: string }, maxArea?: number): IiifRequest =>
+const parse = (
+  parts: { region?: string; size?: string; rotation?: string; file?: string },
+  maxArea?: number,
+): IiifRequest =>
   parseIiifRequest({ region: 'full', size: 'max', rotation: '0', file: 'default.jpg', ...parts }, PICTURE, maxArea);
 const refused = (parts: Parameters<typeof parse>[0], maxArea?: number): string => {
   try {
@@ -30,16 +33,31 @@ describe('a region', () => {
     expect(parse({ region }).region).toEqual({ x, y, width, height });
   });
 
-  it.each(['300,0,10,10', '0,200,10,10', '0,0,0,10', '10,10,10,0', 'pct:100,0,10,10', '-1,0,10,10', '1.5,0,10,10', 'pct:0,0,NaN,1', '1,2,3', 'half', ''])(
-    '%s is refused',
-    (region) => {
-      expect(refused({ region })).toBe('400 iiif-region');
-    },
-  );
+  it.each([
+    '300,0,10,10',
+    '0,200,10,10',
+    '0,0,0,10',
+    '10,10,10,0',
+    'pct:100,0,10,10',
+    '-1,0,10,10',
+    '1.5,0,10,10',
+    'pct:0,0,NaN,1',
+    '1,2,3',
+    'half',
+    '',
+  ])('%s is refused', (region) => {
+    expect(refused({ region })).toBe('400 iiif-region');
+  });
 
   it('by percent neither overlaps its neighbour nor leaves a gap', () => {
-    const thirds = ['pct:0,0,33.3,100', 'pct:33.3,0,33.3,100', 'pct:66.6,0,33.4,100'].map((region) => parse({ region }).region);
-    expect(thirds.map(({ x, width }) => [x, x + width])).toEqual([[0, 100], [100, 200], [200, 300]]);
+    const thirds = ['pct:0,0,33.3,100', 'pct:33.3,0,33.3,100', 'pct:66.6,0,33.4,100'].map(
+      (region) => parse({ region }).region,
+    );
+    expect(thirds.map(({ x, width }) => [x, x + width])).toEqual([
+      [0, 100],
+      [100, 200],
+      [200, 300],
+    ]);
   });
 });
 
@@ -74,7 +92,25 @@ describe('a size', () => {
     expect(parse({ region: '0,0,300,1', size: '3,' }).size).toEqual({ width: 3, height: 1 });
   });
 
-  it.each(['full', '301,', ',201', '301,10', 'pct:101', '0,', ',0', '0,0', '!0,10', 'pct:0', '!150,', ',', '^', '-5,', '1e3,', 'pct:', '99999999999,'])('%s is refused', (size) => {
+  it.each([
+    'full',
+    '301,',
+    ',201',
+    '301,10',
+    'pct:101',
+    '0,',
+    ',0',
+    '0,0',
+    '!0,10',
+    'pct:0',
+    '!150,',
+    ',',
+    '^',
+    '-5,',
+    '1e3,',
+    'pct:',
+    '99999999999,',
+  ])('%s is refused', (size) => {
     expect(refused({ size })).toBe('400 iiif-size');
   });
 
@@ -105,7 +141,12 @@ describe('rotation, quality and format', () => {
 });
 
 describe('the page that a tile is cut from', () => {
-  const levels = [[4000, 3000], [2000, 1500], [1000, 750], [500, 375]].map(([width, height]) => ({ width: width!, height: height! }));
+  const levels = [
+    [4000, 3000],
+    [2000, 1500],
+    [1000, 750],
+    [500, 375],
+  ].map(([width, height]) => ({ width: width!, height: height! }));
 
   it('is the one of its own reduction, so that pixels are copied and not made anew', () => {
     expect(choosePage(levels, { x: 2048, y: 1024, width: 1024, height: 1024 }, { width: 512, height: 512 })).toEqual({

@@ -49,7 +49,9 @@ describe('intake', () => {
   });
 
   it('reads what the camera wrote, and shows the place to its owner alone', async () => {
-    const bytes = await (await gradient(400, 300))
+    const bytes = await (
+      await gradient(400, 300)
+    )
       .withExif({
         IFD0: { Make: 'Hollin', Model: 'Hollin H2', Software: 'x' },
         IFD2: {
@@ -62,7 +64,12 @@ describe('intake', () => {
           FocalPlaneResolutionUnit: '3',
         },
         // CHECKS of coordinates: 51° 30′ 26.45″ N, 0° 7′ 39.99″ W
-        IFD3: { GPSLatitudeRef: 'N', GPSLatitude: '51/1 30/1 2645/100', GPSLongitudeRef: 'W', GPSLongitude: '0/1 7/1 3999/100' },
+        IFD3: {
+          GPSLatitudeRef: 'N',
+          GPSLatitude: '51/1 30/1 2645/100',
+          GPSLongitudeRef: 'W',
+          GPSLongitude: '0/1 7/1 3999/100',
+        },
       })
       .jpeg()
       .toBuffer();
@@ -85,9 +92,13 @@ describe('intake', () => {
   });
 
   it('makes copies that carry none of it', async () => {
-    const bytes = await (await gradient(700, 500))
+    const bytes = await (
+      await gradient(700, 500)
+    )
       .withExif({ IFD0: { Make: 'Hollin' }, IFD3: { GPSLatitudeRef: 'N', GPSLatitude: '51/1 30/1 0/1' } })
-      .withXmp('<x:xmpmeta xmlns:x="adobe:ns:meta/"><rdf:RDF xmlns:rdf="http://www.w3.org/1999/02/22-rdf-syntax-ns#"/></x:xmpmeta>')
+      .withXmp(
+        '<x:xmpmeta xmlns:x="adobe:ns:meta/"><rdf:RDF xmlns:rdf="http://www.w3.org/1999/02/22-rdf-syntax-ns#"/></x:xmpmeta>',
+      )
       .jpeg()
       .toBuffer();
     expect(await exifr.parse(bytes)).toMatchObject({ Make: 'Hollin' });
@@ -110,7 +121,12 @@ describe('intake', () => {
       .tiff({ compression: 'lzw' })
       .toBuffer();
     const id = await bringIn(server, owner, bytes, 'micrograph.tif');
-    expect((await browser.get(`/api/images/${id}`)).body).toMatchObject({ bitDepth: 16, format: 'tiff', width, height });
+    expect((await browser.get(`/api/images/${id}`)).body).toMatchObject({
+      bitDepth: 16,
+      format: 'tiff',
+      width,
+      height,
+    });
     const shown = await sharp(join(madeOf(id), 'access.tif')).stats();
     const { min, max, mean } = shown.channels[0]!;
     expect([min < 5, max > 250, Math.abs(mean - 127.5) < 5]).toEqual([true, true, true]);
@@ -123,28 +139,34 @@ describe('intake', () => {
     [3, 'right', 'bottom'],
     [6, 'right', 'top'],
     [8, 'left', 'bottom'],
-  ] as const)('stands orientation %i upright: the stored first corner comes to the %s %s', async (orientation, across, down) => {
-    const stored = Buffer.alloc(60 * 40 * 3, 0);
-    for (let y = 0; y < 10; y++) for (let x = 0; x < 10; x++) stored[(y * 60 + x) * 3] = 255; // red in the first corner
-    for (const format of ['jpeg', 'tiff'] as const) {
-      const bytes = await sharp(stored, { raw: { width: 60, height: 40, channels: 3 } })
-        .withMetadata({ orientation })
-        .toFormat(format, { quality: 100 })
-        .toBuffer();
-      const id = await bringIn(server, owner, bytes, `turned.${format}`);
-      const { width, height } = (await browser.get(`/api/images/${id}`)).body as { width: number; height: number };
-      expect([width, height]).toEqual(orientation === 3 ? [60, 40] : [40, 60]);
-      const { data, info } = await sharp(join(madeOf(id), 'access.tif')).raw().toBuffer({ resolveWithObject: true });
-      const red = (x: number, y: number) => data[(y * info.width + x) * info.channels]!;
-      const x = across === 'left' ? 3 : width - 4;
-      const y = down === 'top' ? 3 : height - 4;
-      expect(red(x, y)).toBeGreaterThan(150);
-      expect(red(width - 1 - x, height - 1 - y)).toBeLessThan(100);
-    }
-  });
+  ] as const)(
+    'stands orientation %i upright: the stored first corner comes to the %s %s',
+    async (orientation, across, down) => {
+      const stored = Buffer.alloc(60 * 40 * 3, 0);
+      for (let y = 0; y < 10; y++) for (let x = 0; x < 10; x++) stored[(y * 60 + x) * 3] = 255; // red in the first corner
+      for (const format of ['jpeg', 'tiff'] as const) {
+        const bytes = await sharp(stored, { raw: { width: 60, height: 40, channels: 3 } })
+          .withMetadata({ orientation })
+          .toFormat(format, { quality: 100 })
+          .toBuffer();
+        const id = await bringIn(server, owner, bytes, `turned.${format}`);
+        const { width, height } = (await browser.get(`/api/images/${id}`)).body as { width: number; height: number };
+        expect([width, height]).toEqual(orientation === 3 ? [60, 40] : [40, 60]);
+        const { data, info } = await sharp(join(madeOf(id), 'access.tif'))
+          .raw()
+          .toBuffer({ resolveWithObject: true });
+        const red = (x: number, y: number) => data[(y * info.width + x) * info.channels]!;
+        const x = across === 'left' ? 3 : width - 4;
+        const y = down === 'top' ? 3 : height - 4;
+        expect(red(x, y)).toBeGreaterThan(150);
+        expect(red(width - 1 - x, height - 1 - y)).toBeLessThan(100);
+      }
+    },
+  );
 
   it('says what a file is that it does not take, whatever its name', async () => {
-    const refused = async (bytes: Buffer, name: string) => (await trayed(browser, await bringIn(server, owner, bytes, name)))['refusal'];
+    const refused = async (bytes: Buffer, name: string) =>
+      (await trayed(browser, await bringIn(server, owner, bytes, name)))['refusal'];
     const svg = Buffer.from('<?xml version="1.0"?><svg xmlns="http://www.w3.org/2000/svg" width="9" height="9"/>');
     expect(await refused(svg, 'picture.jpg')).toEqual({ code: 'type-not-accepted', parameters: { found: 'SVG' } });
     const gif = await (await gradient(20, 20)).gif().toBuffer();
@@ -153,8 +175,14 @@ describe('intake', () => {
     expect(await refused(avif, 'picture.webp')).toEqual({ code: 'type-not-accepted', parameters: { found: 'AVIF' } });
     const heic = Buffer.concat([Buffer.from([0, 0, 0, 24]), Buffer.from('ftypheic'), Buffer.alloc(40)]);
     expect(await refused(heic, 'IMG_0001.JPG')).toEqual({ code: 'type-not-accepted', parameters: { found: 'HEIC' } });
-    expect(await refused(Buffer.from('not a picture'), 'a.tif')).toEqual({ code: 'type-not-accepted', parameters: { found: 'unknown' } });
-    expect(await refused(Buffer.alloc(0), 'empty.jpg')).toEqual({ code: 'type-not-accepted', parameters: { found: 'nothing' } });
+    expect(await refused(Buffer.from('not a picture'), 'a.tif')).toEqual({
+      code: 'type-not-accepted',
+      parameters: { found: 'unknown' },
+    });
+    expect(await refused(Buffer.alloc(0), 'empty.jpg')).toEqual({
+      code: 'type-not-accepted',
+      parameters: { found: 'nothing' },
+    });
   });
 
   it('takes a picture with a wrong extension for what it is', async () => {
@@ -165,11 +193,17 @@ describe('intake', () => {
 
   it('refuses TIFF of floating point, which has no agreed way to be shown', async () => {
     const id = await bringIn(server, owner, floatTiff(8, 8), 'elevation.tif');
-    expect(await trayed(browser, id)).toMatchObject({ state: 'refused', refusal: { code: 'type-not-accepted', parameters: { found: 'TIFF, float' } } });
+    expect(await trayed(browser, id)).toMatchObject({
+      state: 'refused',
+      refusal: { code: 'type-not-accepted', parameters: { found: 'TIFF, float' } },
+    });
   });
 
   it('refuses a small file that claims to be huge, without decoding it', async () => {
-    for (const [name, bomb] of [['bomb.png', pngClaiming(60_000, 60_000)], ['bomb.tif', tiffClaiming(60_000, 60_000)]] as const) {
+    for (const [name, bomb] of [
+      ['bomb.png', pngClaiming(60_000, 60_000)],
+      ['bomb.tif', tiffClaiming(60_000, 60_000)],
+    ] as const) {
       expect(bomb.length).toBeLessThan(10_000);
       const id = await bringIn(server, owner, bomb, name);
       expect(await trayed(browser, id)).toMatchObject({
@@ -188,7 +222,11 @@ describe('intake', () => {
 
   it('can be tried again after a refusal, by its owner', async () => {
     const id = await bringIn(server, owner, Buffer.from('nothing good'));
-    expect((await browser.post(`/api/images/${id}/retry`).expect(200)).body).toMatchObject({ id, state: 'waiting', refusal: null });
+    expect((await browser.post(`/api/images/${id}/retry`).expect(200)).body).toMatchObject({
+      id,
+      state: 'waiting',
+      refusal: null,
+    });
     await server.app.jobs.drain();
     expect(await trayed(browser, id)).toMatchObject({ state: 'refused' });
     const other = await server.signIn(await server.addPerson('photographer'));
@@ -201,7 +239,10 @@ describe('intake', () => {
     const second = await bringIn(server, owner, bytes, 'second.jpg');
     expect((await trayed(browser, first))['sameAs']).toBeNull();
     expect((await trayed(browser, second))['sameAs']).toEqual({ imageId: first, name: 'first.jpg', findNumber: null });
-    const originals = () => readdirSync(join(server.config.dataDir, 'originals'), { recursive: true, withFileTypes: true }).filter((entry) => entry.isFile()).length;
+    const originals = () =>
+      readdirSync(join(server.config.dataDir, 'originals'), { recursive: true, withFileTypes: true }).filter((entry) =>
+        entry.isFile(),
+      ).length;
     expect(originals()).toBe(1);
     await browser.delete(`/api/images/${second}`).expect(204);
     await server.app.jobs.drain();
@@ -223,7 +264,11 @@ describe('intake', () => {
 describe('the limits of intake', () => {
   it.each([
     ['time', { memoryBytes: 4e9, timeMs: 1 }, { code: 'took-too-long', parameters: { seconds: 0 } }],
-    ['memory', { memoryBytes: 1e6, timeMs: 60_000 }, { code: 'intake-failed', parameters: { reason: 'memory', megabytes: 1 } }],
+    [
+      'memory',
+      { memoryBytes: 1e6, timeMs: 60_000 },
+      { code: 'intake-failed', parameters: { reason: 'memory', megabytes: 1 } },
+    ],
   ])('end a picture that takes too much %s, with a word to its owner', async (_name, intakeLimits, refusal) => {
     const server = await TestApp.open({}, { intakeLimits });
     try {
@@ -252,7 +297,12 @@ function pngClaiming(width: number, height: number): Buffer {
   header.writeUInt32BE(height, 4);
   header.set([8, 2, 0, 0, 0], 8);
   const signature = Buffer.from([137, 80, 78, 71, 13, 10, 26, 10]);
-  return Buffer.concat([signature, chunk('IHDR', header), chunk('IDAT', deflateSync(Buffer.alloc(1000))), chunk('IEND', Buffer.alloc(0))]);
+  return Buffer.concat([
+    signature,
+    chunk('IHDR', header),
+    chunk('IDAT', deflateSync(Buffer.alloc(1000))),
+    chunk('IEND', Buffer.alloc(0)),
+  ]);
 }
 
 /** TIFF 6.0, one strip, little-endian. */
@@ -273,12 +323,33 @@ function tiff(entries: readonly (readonly [tag: number, type: 3 | 4, value: numb
 }
 
 function tiffClaiming(width: number, height: number): Buffer {
-  const tags = [[256, 4, width], [257, 4, height], [258, 3, 8], [259, 3, 1], [262, 3, 1], [273, 4, 0], [277, 3, 1], [278, 4, height], [279, 4, 100]] as const;
+  const tags = [
+    [256, 4, width],
+    [257, 4, height],
+    [258, 3, 8],
+    [259, 3, 1],
+    [262, 3, 1],
+    [273, 4, 0],
+    [277, 3, 1],
+    [278, 4, height],
+    [279, 4, 100],
+  ] as const;
   return tiff(tags, Buffer.alloc(100));
 }
 
 function floatTiff(width: number, height: number): Buffer {
   const bytes = width * height * 4;
-  const tags = [[256, 4, width], [257, 4, height], [258, 3, 32], [259, 3, 1], [262, 3, 1], [273, 4, 0], [277, 3, 1], [278, 4, height], [279, 4, bytes], [339, 3, 3]] as const;
+  const tags = [
+    [256, 4, width],
+    [257, 4, height],
+    [258, 3, 32],
+    [259, 3, 1],
+    [262, 3, 1],
+    [273, 4, 0],
+    [277, 3, 1],
+    [278, 4, height],
+    [279, 4, bytes],
+    [339, 3, 3],
+  ] as const;
   return tiff(tags, Buffer.alloc(bytes));
 }

@@ -53,13 +53,24 @@ describe('a picture on its way in survives a kill', () => {
     const filename = Buffer.from('under the sleepers.jpg').toString('base64');
     const answer = await fetch(`${origin}/api/uploads`, {
       method: 'POST',
-      headers: { ...headers, 'Tus-Resumable': '1.0.0', 'Upload-Length': String(length), 'Upload-Metadata': `filename ${filename}` },
+      headers: {
+        ...headers,
+        'Tus-Resumable': '1.0.0',
+        'Upload-Length': String(length),
+        'Upload-Metadata': `filename ${filename}`,
+      },
     });
     return answer.headers.get('location') ?? '';
   };
   const goOn = (origin: string, headers: Record<string, string>, path: string, file: Buffer): Promise<void> =>
     new Promise((resolve, reject) => {
-      new Upload(file, { uploadUrl: `${origin}${path}`, headers, retryDelays: null, onError: reject, onSuccess: () => resolve() }).start();
+      new Upload(file, {
+        uploadUrl: `${origin}${path}`,
+        headers,
+        retryDelays: null,
+        onError: reject,
+        onSuccess: () => resolve(),
+      }).start();
     });
   const tray = async (origin: string, headers: Record<string, string>): Promise<Trayed[]> =>
     (await (await fetch(`${origin}/api/tray`, { headers })).json()) as Trayed[];
@@ -69,7 +80,9 @@ describe('a picture on its way in survives a kill', () => {
       const [picture] = await tray(origin, headers);
       if (picture?.image) {
         for (const width of picture.image.renditionWidths) {
-          const answer = await fetch(`${origin}/renditions/${picture.id}~${picture.image.revision}/${width}.webp`, { headers });
+          const answer = await fetch(`${origin}/renditions/${picture.id}~${picture.image.revision}/${width}.webp`, {
+            headers,
+          });
           expect([width, answer.status]).toEqual([width, 200]);
         }
         return picture;
@@ -117,7 +130,8 @@ describe('a picture on its way in survives a kill', () => {
     running = await SpawnedServer.start(dataDir);
     const before = await running.signIn(PHOTOGRAPHER);
     await goOn(running.origin, before, await begin(running.origin, before, bytes.length), bytes);
-    while ((await tray(running.origin, before))[0]?.state !== 'working') await new Promise((resolve) => setTimeout(resolve, 5));
+    while ((await tray(running.origin, before))[0]?.state !== 'working')
+      await new Promise((resolve) => setTimeout(resolve, 5));
     await running.kill();
     running = await SpawnedServer.start(dataDir);
     await shown(running.origin, await running.signIn(PHOTOGRAPHER));

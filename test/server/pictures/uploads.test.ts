@@ -51,7 +51,11 @@ describe('a resumable upload', () => {
     const bytes = await jpegOf(500, 400);
     const upload = await send(bytes);
     const browser = await served.server.signIn(owner);
-    expect(await trayed(browser, idOf(upload.url))).toMatchObject({ name: 'Tümpel – 1.jpg', state: 'waiting', image: null });
+    expect(await trayed(browser, idOf(upload.url))).toMatchObject({
+      name: 'Tümpel – 1.jpg',
+      state: 'waiting',
+      image: null,
+    });
     await served.server.app.jobs.drain();
     expect(await trayed(browser, idOf(upload.url))).toMatchObject({ state: 'ready' });
     expect(readdirSync(folder('uploads'))).toEqual([]);
@@ -119,7 +123,11 @@ describe('a resumable upload', () => {
     const id = await begin(bytes.length);
     await raw('PATCH', `/api/uploads/${id}`, { 'Upload-Offset': '0', ...OCTETS }, bytes);
     const asked = await raw('HEAD', `/api/uploads/${id}`);
-    expect([asked.status, asked.headers.get('upload-offset'), asked.headers.get('upload-length')]).toEqual([200, String(bytes.length), String(bytes.length)]);
+    expect([asked.status, asked.headers.get('upload-offset'), asked.headers.get('upload-length')]).toEqual([
+      200,
+      String(bytes.length),
+      String(bytes.length),
+    ]);
     const again = await send(bytes, { uploadUrl: `${endpoint()}/${id}` }); // the client goes on as it would
     expect(idOf(again.url)).toBe(id);
     const tray = (await (await served.server.signIn(owner)).get('/api/tray')).body as unknown[];
@@ -129,14 +137,22 @@ describe('a resumable upload', () => {
   it('is refused when it is larger than accepted, before any byte is sent', async () => {
     const failure = (await send(Buffer.alloc(2 * 1024 * 1024 + 1)).catch((error: unknown) => error)) as DetailedError;
     expect(failure.originalResponse?.getStatus()).toBe(413);
-    expect(JSON.parse(failure.originalResponse?.getBody() ?? '')).toMatchObject({ type: '/problems/too-large', parameters: { mostMegabytes: 2 } });
+    expect(JSON.parse(failure.originalResponse?.getBody() ?? '')).toMatchObject({
+      type: '/problems/too-large',
+      parameters: { mostMegabytes: 2 },
+    });
     expect(readdirSync(folder('uploads'))).toEqual([]);
   });
 
   it('does not grow past its limit when it said no length', async () => {
     const begun = await raw('POST', '/api/uploads', { 'Upload-Defer-Length': '1' });
     const id = idOf(begun.headers.get('location'));
-    const answer = await raw('PATCH', `/api/uploads/${id}`, { 'Upload-Offset': '0', ...OCTETS }, Buffer.alloc(3 * 1024 * 1024)).catch(() => null);
+    const answer = await raw(
+      'PATCH',
+      `/api/uploads/${id}`,
+      { 'Upload-Offset': '0', ...OCTETS },
+      Buffer.alloc(3 * 1024 * 1024),
+    ).catch(() => null);
     expect(answer === null || answer.status >= 400).toBe(true);
   });
 
@@ -144,7 +160,10 @@ describe('a resumable upload', () => {
     const anonymous = await fetch(endpoint(), { method: 'HEAD', headers: { 'Tus-Resumable': '1.0.0' } });
     expect(anonymous.status).toBe(401);
     const { Cookie = '' } = headers;
-    const forged = await fetch(endpoint(), { method: 'POST', headers: { 'Tus-Resumable': '1.0.0', 'Upload-Length': '9', Cookie } });
+    const forged = await fetch(endpoint(), {
+      method: 'POST',
+      headers: { 'Tus-Resumable': '1.0.0', 'Upload-Length': '9', Cookie },
+    });
     expect(forged.status).toBe(403);
     expect(readdirSync(folder('uploads'))).toEqual([]);
   });
@@ -155,7 +174,12 @@ describe('a resumable upload', () => {
     const finished = idOf((await send(bytes)).url);
     const other = await served.headers(await served.server.addPerson('keeper'));
     for (const id of [unfinished, finished, '../motebook.sqlite', '%2e%2e%2fsession-secret']) {
-      for (const [method, more, body] of [['HEAD', {}], ['GET', {}], ['DELETE', {}], ['PATCH', { 'Upload-Offset': '0', ...OCTETS }, bytes]] as const) {
+      for (const [method, more, body] of [
+        ['HEAD', {}],
+        ['GET', {}],
+        ['DELETE', {}],
+        ['PATCH', { 'Upload-Offset': '0', ...OCTETS }, bytes],
+      ] as const) {
         const answer = await raw(method, `/api/uploads/${id}`, { ...more, ...other }, body);
         expect([method, id, answer.status]).toEqual([method, id, 404]);
       }
