@@ -7,6 +7,7 @@ import type { ImageScaleTable } from './db/image-scales.js';
 import { ImageSurroundingsTable } from './db/image-surroundings.js';
 import type { ImageTable } from './db/images.js';
 import type { JobTable } from './db/jobs.js';
+import { RigTable } from './db/rigs.js';
 import { ThingTable } from './db/things.js';
 import type { UserTable } from './db/users.js';
 import { Arrivals } from './pictures/arrivals.js';
@@ -56,9 +57,19 @@ export function createPictureRooms(options: PictureRoomOptions) {
   const surroundings = new ImageSurroundingsTable(db);
   const arrivals = new Arrivals({ db, images, users, jobTable, files, originals, clock, nudge });
   const uploads = new Uploads({ files, arrivals, images, maxBytes: config.maxUploadBytes, clock, log });
-  const intake = new Intake(images, files, { maxPixels: config.maxPixels, limits: options.intakeLimits ?? INTAKE_LIMITS });
+  const intake = new Intake(images, files, {
+    maxPixels: config.maxPixels,
+    limits: options.intakeLimits ?? INTAKE_LIMITS,
+  });
   const pictures = new PictureServer(files);
-  const imageService = new ImageService({ images, scales: imageScales, surroundings, things, clock });
+  const imageService = new ImageService({
+    images,
+    scales: imageScales,
+    surroundings,
+    things,
+    rigs: new RigTable(db),
+    clock,
+  });
   const tray = new TrayService({ db, images, scales: imageScales, jobTable, clock, nudge });
   const carryAway = new CarryAwayService({ scales: imageScales, surroundings, pictures, files });
   const jobs = {

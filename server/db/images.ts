@@ -43,7 +43,12 @@ export interface Image {
 }
 
 /** A picture whose intake is done. */
-export type ReadyImage = Image & { readonly width: number; readonly height: number; readonly bitDepth: number; readonly format: PictureType };
+export type ReadyImage = Image & {
+  readonly width: number;
+  readonly height: number;
+  readonly bitDepth: number;
+  readonly format: PictureType;
+};
 
 export function isReady(image: Image): image is ReadyImage {
   return image.state === 'ready';
@@ -86,9 +91,14 @@ export interface ImageRow {
 }
 
 /** What intake found out; written once it is done. */
-export type Taken = Pick<Image, 'format' | 'width' | 'height' | 'bitDepth' | 'capture' | 'exactPlace' | 'colours' | 'renditionWidths'>;
+export type Taken = Pick<
+  Image,
+  'format' | 'width' | 'height' | 'bitDepth' | 'capture' | 'exactPlace' | 'colours' | 'renditionWidths'
+>;
 
-export type ImageEdit = Partial<Pick<Image, 'title' | 'altText' | 'role' | 'light' | 'licence' | 'creditLine' | 'preparationId'>>;
+export type ImageEdit = Partial<
+  Pick<Image, 'title' | 'altText' | 'role' | 'light' | 'licence' | 'creditLine' | 'preparationId' | 'settingId'>
+>;
 
 export class ImageTable {
   constructor(private readonly db: Database) {}
@@ -99,7 +109,10 @@ export class ImageTable {
   }
 
   async insert(
-    image: Pick<Image, 'id' | 'ownerId' | 'sha256' | 'originalName' | 'bytes' | 'licence' | 'creditLine' | 'uploadedAt'>,
+    image: Pick<
+      Image,
+      'id' | 'ownerId' | 'sha256' | 'originalName' | 'bytes' | 'licence' | 'creditLine' | 'uploadedAt'
+    >,
     trx: Knex.Transaction,
   ): Promise<void> {
     await trx<ImageRow>('images').insert({
@@ -126,7 +139,9 @@ export class ImageTable {
   }
 
   /** earlier pictures of the same owner with the same bytes, oldest first, with the number of their find */
-  async sameBytes(images: readonly Image[]): Promise<{ id: string; name: string; sha256: string; findNumber: string | null }[]> {
+  async sameBytes(
+    images: readonly Image[],
+  ): Promise<{ id: string; name: string; sha256: string; findNumber: string | null }[]> {
     const [first] = images;
     if (!first) return [];
     const rows = (await this.db
@@ -192,12 +207,17 @@ export class ImageTable {
   }
 
   async setRefused(id: string, refusal: Refusal, knex: Knex = this.db.write): Promise<void> {
-    await knex<ImageRow>('images').where({ id }).whereNot({ state: 'ready' }).update({ state: 'refused', refusal: JSON.stringify(refusal) });
+    await knex<ImageRow>('images')
+      .where({ id })
+      .whereNot({ state: 'ready' })
+      .update({ state: 'refused', refusal: JSON.stringify(refusal) });
   }
 
   /** back to waiting for intake; false unless it had been refused */
   async setWaiting(id: string, trx: Knex.Transaction): Promise<boolean> {
-    const changed = await trx<ImageRow>('images').where({ id, state: 'refused' }).update({ state: 'waiting', refusal: null });
+    const changed = await trx<ImageRow>('images')
+      .where({ id, state: 'refused' })
+      .update({ state: 'waiting', refusal: null });
     return changed === 1;
   }
 
@@ -210,15 +230,18 @@ export class ImageTable {
       ...(edit.licence !== undefined && { licence: edit.licence }),
       ...(edit.creditLine !== undefined && { credit_line: edit.creditLine }),
       ...(edit.preparationId !== undefined && { preparation_id: edit.preparationId }),
+      ...(edit.settingId !== undefined && { setting_id: edit.settingId }),
     };
     if (Object.keys(columns).length > 0) await this.db.write<ImageRow>('images').where({ id }).update(columns);
   }
 
   async setScale(id: string, scaleId: string, settingId: string | null, trx: Knex.Transaction): Promise<void> {
-    await trx<ImageRow>('images').where({ id }).update({
-      current_scale_id: scaleId,
-      ...(settingId !== null && { setting_id: settingId }),
-    });
+    await trx<ImageRow>('images')
+      .where({ id })
+      .update({
+        current_scale_id: scaleId,
+        ...(settingId !== null && { setting_id: settingId }),
+      });
   }
 
   async remove(id: string, trx: Knex.Transaction): Promise<void> {

@@ -4,7 +4,8 @@ import { type Actor, can, type Thing } from '../../shared/permission/can.js';
 import { type Clock, today } from '../clock.js';
 import type { ImageScaleTable } from '../db/image-scales.js';
 import type { ImageSurroundingsTable } from '../db/image-surroundings.js';
-import { type ImageTable, isReady, type ReadyImage } from '../db/images.js';
+import { type Image, type ImageTable, isReady, type ReadyImage } from '../db/images.js';
+import type { RigTable } from '../db/rigs.js';
 import type { ThingTable } from '../db/things.js';
 import { Conflict, Invalid, NotFound } from '../problem.js';
 import { toImageTile } from './image-tile.js';
@@ -14,6 +15,7 @@ export interface ImageServiceOptions {
   readonly scales: ImageScaleTable;
   readonly surroundings: ImageSurroundingsTable;
   readonly things: ThingTable;
+  readonly rigs: RigTable;
   readonly clock: Clock;
 }
 
@@ -25,7 +27,8 @@ export class ImageService {
   async ready(imageId: string): Promise<ReadyImage> {
     const image = await this.options.images.find(imageId);
     if (!image) throw new NotFound('image');
-    if (!isReady(image)) throw new Conflict('not-ready', 'The picture has not been taken in yet.', { state: image.state });
+    if (!isReady(image))
+      throw new Conflict('not-ready', 'The picture has not been taken in yet.', { state: image.state });
     return image;
   }
 
@@ -60,16 +63,35 @@ export class ImageService {
     };
   }
 
-  /** @throws {Invalid} for a preparation of another observation */
+  /**
+   * @throws {Invalid} for a preparation of another observation
+   * @throws {NotFound} for a setting of somebody else's
+   * @throws {Conflict} `has-scale` for another setting of a picture that has a scale
+   */
   async edit(imageId: string, edit: EditImage): Promise<void> {
     const { images, surroundings } = this.options;
     const image = await images.find(imageId);
     if (!image) throw new NotFound('image');
     if (edit.preparationId && (await surroundings.observationOf(edit.preparationId)) !== image.observationId) {
       throw new Invalid([
-        { pointer: '#/preparationId', code: 'other-observation', detail: 'The preparation belongs to another observation.' },
+        {
+          pointer: '#/preparationId',
+          code: 'other-observation',
+          detail: 'The preparation belongs to another observation.',
+        },
       ]);
     }
+    if (edit.settingId !== undefined) await this.requireSetting(image, edit.settingId);
     await images.edit(imageId, edit);
+  }
+
+  /** A scale says by itself which setting it is of; another setting beside it would contradict it. */
+  private async requireSetting(image: Image, settingId: string | null): Promise<void> {
+    if (settingId === image.settingId) return;
+    if (image.currentScaleId !== null) throw new Conflict('has-scale', 'The picture has a scale already.');
+    if (settingId === null) return;
+    const setting = await this.options.rigs.setting(settingId);
+    const rig = setting && (await this.options.rigs.find(setting.rigId));
+    if (rig?.ownerId !== image.ownerId) throw new NotFound('setting');
   }
 }

@@ -29,7 +29,8 @@ export class TrayService {
   async retry(imageId: string): Promise<TrayPicture> {
     const { db, images, jobTable, clock, nudge } = this.options;
     await db.write.transaction(async (trx) => {
-      if (!(await images.setWaiting(imageId, trx))) throw new Conflict('not-refused', 'Only what was refused can be tried again.');
+      if (!(await images.setWaiting(imageId, trx)))
+        throw new Conflict('not-refused', 'Only what was refused can be tried again.');
       await jobTable.enqueue(trx, { kind: 'intake', about: imageId, now: instant(clock) });
     });
     nudge();
@@ -48,9 +49,15 @@ export class TrayService {
       const image = await images.find(imageId, trx);
       if (!image) throw new NotFound('image');
       if (image.observationId !== null) throw new Conflict('in-a-find', 'A picture of a find is not discarded.');
-      if (await images.isEvidence(imageId, trx)) throw new Conflict('calibration-evidence', 'A calibration rests upon it.');
+      if (await images.isEvidence(imageId, trx))
+        throw new Conflict('calibration-evidence', 'A calibration rests upon it.');
       await images.remove(imageId, trx);
-      await jobTable.enqueue(trx, { kind: 'forget-files', about: imageId, payload: { sha256: image.sha256 }, now: instant(clock) });
+      await jobTable.enqueue(trx, {
+        kind: 'forget-files',
+        about: imageId,
+        payload: { sha256: image.sha256 },
+        now: instant(clock),
+      });
     });
     nudge();
   }
@@ -71,6 +78,7 @@ export class TrayService {
           exactPlace: image.exactPlace,
           role: image.role,
           light: image.light,
+          settingId: image.settingId,
           image: isReady(image) ? toImageTile(image, await this.currentScale(image)) : null,
           uploadedAt: image.uploadedAt,
         };
@@ -79,6 +87,8 @@ export class TrayService {
   }
 
   private async currentScale(image: Image) {
-    return image.currentScaleId === null ? null : ((await this.options.scales.find(image.currentScaleId))?.scale ?? null);
+    return image.currentScaleId === null
+      ? null
+      : ((await this.options.scales.find(image.currentScaleId))?.scale ?? null);
   }
 }

@@ -71,6 +71,8 @@ export const TrayPicture = z.strictObject({
   exactPlace: z.nullable(z.strictObject({ latitude: z.number(), longitude: z.number() })),
   role: ImageRole,
   light: Light,
+  /** the rig's setting it was taken with; without a scale it waits for that setting's calibration */
+  settingId: z.nullable(Id),
   image: z.nullable(ImageTile),
   uploadedAt: z.string(),
 });
@@ -111,6 +113,11 @@ export const EditImage = z.strictObject({
   licence: z.optional(Licence),
   creditLine: z.optional(line(120)),
   preparationId: z.optional(z.nullable(Id)),
+  /**
+   * the setting it was taken with, said before that is calibrated: calibrating then scales it. Refused with 409
+   * `has-scale` once there is a scale, which only `setScale` changes.
+   */
+  settingId: z.optional(z.nullable(Id)),
 });
 export type EditImage = z.infer<typeof EditImage>;
 

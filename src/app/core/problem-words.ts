@@ -56,6 +56,7 @@ const WORDS: Readonly<Record<string, Words>> = {
   'intake-failed': () => $localize`The picture could not be taken in. Try it again.`,
   'not-ready': () => $localize`The picture is still being taken in. Try again in a moment.`,
   'not-refused': () => $localize`Only a picture that was refused can be tried again.`,
+  'has-scale': () => $localize`The picture has a scale already, of another setting.`,
   'in-a-find': () => $localize`The picture belongs to a find, so it stays.`,
   'calibration-evidence': () => $localize`A calibration rests upon this picture, so it stays.`,
   'not-your-picture': () => $localize`This needs a picture of your own that is ready.`,

@@ -83,7 +83,8 @@ describe('calibrating', () => {
       scaledImages: 12,
     });
     await fixture.whenStable();
-    expect(text()).toContain('12 waiting pictures of this setting carry it now');
+    http.expectOne('/api/tray').flush([]);
+    expect(text()).toContain('12 pictures of this setting carry it now');
   });
 
   it('says why the server would not keep it, and leaves the marks', async () => {

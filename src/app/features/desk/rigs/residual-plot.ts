@@ -8,7 +8,7 @@ const EDGE = 6;
 /** Half of the axis at least, image px: so that marks within half a pixel look as good as they are. */
 const LEAST_PX = 1;
 
-/** How far each mark lies from its fitted place along the ruling, as stems from a rule. */
+/** How far each mark lies from its fitted place along the ruling, as stems from a rule. For three marks or more. */
 @Component({
   selector: 'app-residual-plot',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -54,9 +54,8 @@ export class ResidualPlot {
   protected readonly words = computed(() => {
     const { residualsPx, residualSdPx } = this.fit();
     const worst = this.worst();
-    if (residualSdPx === null) return $localize`Two marks leave no scatter to look at.`;
     const which = this.indices()[residualsPx.findIndex((residual) => Math.abs(residual) === worst)] ?? 0;
-    return $localize`Scatter of the marks ${residualSdPx.toFixed(2)}:sd: px; mark ${which}:number: lies farthest off, ${worst.toFixed(2)}:worst: px`;
+    return $localize`Scatter of the marks ${(residualSdPx ?? 0).toFixed(2)}:sd: px; mark ${which}:number: lies farthest off, ${worst.toFixed(2)}:worst: px`;
   });
 
   protected readonly stems = computed(() => {

@@ -16,6 +16,7 @@ function taken(name: string, local: string | null, exactPlace: TrayPicture['exac
     exactPlace,
     role: 'subject',
     light: 'unknown',
+    settingId: null,
     image: null,
     uploadedAt: '2025-11-03T18:00:00.000Z',
   };

@@ -6,11 +6,16 @@ import { MatMenuModule } from '@angular/material/menu';
 import { MatSnackBar, MatSnackBarModule } from '@angular/material/snack-bar';
 import { Router, RouterLink } from '@angular/router';
 import { mdiDotsVertical, mdiPlus } from '@mdi/js';
+import { finalize } from 'rxjs';
 import type { FindView } from '@shared/contracts/finds';
 import { LIGHTS, type TrayPicture } from '@shared/contracts/images';
+import { rigRoutes } from '@shared/contracts/rigs';
+import { Api } from '../../../core/api';
+import { toApiProblem } from '../../../core/api-problem';
 import { Empty } from '../../../ui/empty/empty';
 import { Icon } from '../../../ui/icon/icon';
 import { ProblemBox } from '../../../ui/problem/problem';
+import { scaleWords } from '../rigs/calibration-words';
 import { ACCEPT, droppedFiles } from '../uploads/picture-files';
 import { UploadQueue } from '../uploads/upload-queue';
 import { ComingIn } from './coming-in';
@@ -20,6 +25,8 @@ import { groupPictures } from './groups';
 import { LIGHT_WORDS } from './light-words';
 import { PictureGrid } from './picture-grid';
 import { choose, keepPresent, NOTHING, type Selection } from './selection';
+import { SettingGiver, type GivenSetting } from './setting-giver';
+import { SizeQuestion, type SizeAnswer } from './size-question';
 import { TrayStore, UNDO_MS } from './tray-store';
 
 /** Beside the pictures where there is room; on a phone the whole screen. */
@@ -62,7 +69,9 @@ export class Tray {
   private readonly dialog = inject(MatDialog);
   private readonly snackBar = inject(MatSnackBar);
   private readonly router = inject(Router);
+  private readonly giver = inject(SettingGiver);
   private readonly grid = viewChild(PictureGrid);
+  private readonly rigs = inject(Api).resource(rigRoutes.list, () => ({}));
 
   protected readonly icons = { add: mdiPlus, more: mdiDotsVertical };
   protected readonly accept = ACCEPT;
@@ -81,6 +90,19 @@ export class Tray {
     this.groups().flatMap(({ pictures }) => pictures.filter(({ id }) => this.selection().ids.has(id))),
   );
   protected readonly allReference = computed(() => this.chosen().every(({ role }) => role === 'reference'));
+  /** what was taken with which setting: each with the scale that holds, or with the want of one */
+  protected readonly settingChoices = computed(() => {
+    const rigs = this.rigs.error() ? [] : (this.rigs.value() ?? []);
+    return rigs.flatMap((rig) =>
+      rig.settings.map(({ id, name, calibration }) => ({
+        id,
+        name,
+        rig: rig.name,
+        scale: calibration ? scaleWords(calibration) : $localize`not calibrated yet`,
+      })),
+    );
+  });
+  protected readonly busy = signal(false);
   protected readonly underUltraviolet = computed(() => this.chosen().some(({ light }) => light === 'ultraviolet'));
 
   constructor() {
@@ -136,6 +158,22 @@ export class Tray {
     this.tray.edit(this.selection().ids, { role });
   }
 
+  protected giveSetting(settingId: string): void {
+    const ask = (count: number) =>
+      this.dialog.open<SizeQuestion, number, SizeAnswer>(SizeQuestion, { width: '460px', data: count }).afterClosed();
+    this.busy.set(true);
+    this.giver
+      .give(this.chosen(), settingId, ask)
+      .pipe(finalize(() => this.busy.set(false)))
+      .subscribe({
+        next: (given) => {
+          this.tray.refresh();
+          this.snackBar.open(givenWords(given), undefined, { duration: 8_000 });
+        },
+        error: (error: unknown) => this.tray.problem.set(toApiProblem(error)),
+      });
+  }
+
   protected discard(): void {
     const ids = this.chosen().map(({ id }) => id);
     this.tray.discard(ids);
@@ -165,4 +203,14 @@ export class Tray {
           .subscribe(() => void this.router.navigate(['/finds', find.id]));
       });
   }
+}
+
+function givenWords({ scaled, waiting, left }: GivenSetting): string {
+  return [
+    scaled > 0 ? $localize`${scaled}:count: with a scale.` : '',
+    waiting > 0 ? $localize`${waiting}:count: wait until this setting is calibrated.` : '',
+    left > 0 ? $localize`${left}:count: left without a scale.` : '',
+  ]
+    .filter(Boolean)
+    .join(' ');
 }
