@@ -85,8 +85,7 @@ export class OpenPicture {
       const answer = await fetch(`${address}/info.json`);
       if (!answer.ok) throw new Error(`info.json: ${answer.status}`);
       const information = { ...((await answer.json()) as object), id: address };
-      // as text: the viewer then recognises the kind of document by itself
-      if (!this.closed) this.viewer.open(JSON.stringify(information));
+      if (!this.closed) this.viewer.open({ tileSource: information });
     } catch {
       this.hasFailed.set(true); // no connection, or not to be seen any more: the page around it says which
     }
