@@ -6,6 +6,7 @@
  */
 import { mkdir } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
+import { renderFingerBesideCap } from './scenes/finger-beside-cap.js';
 import { renderHeadsOnBark } from './scenes/heads-on-bark.js';
 import { renderMillipedeUv } from './scenes/millipede-uv.js';
 import { renderMicrometer } from './micrographs/micrometer.js';
@@ -19,6 +20,7 @@ const width = Number(process.env['WIDTH'] ?? 1600);
 
 const PICTURES: Readonly<Record<string, () => Promise<void>>> = {
   'heads-on-bark': () => renderHeadsOnBark(Math.ceil(14 * quality), width),
+  'finger-beside-cap': () => renderFingerBesideCap(Math.ceil(12 * quality), width),
   'millipede-uv': () => renderMillipedeUv(Math.ceil(14 * quality), width),
   'spores-clavata': () => renderSporesClavata(Math.ceil(40 * quality)),
   'spores-ellipsoid': () => renderSporesEllipsoid(Math.ceil(30 * quality)),

@@ -21,7 +21,7 @@ const UM_PER_PX = 0.1464;
 const FRAME: Frame = { left: 224, top: 424, width: 1600, height: 1200 };
 const SOURCE = 'Macbride T.H. 1922, The North American Slime-Moulds, new and revised ed., p. 272';
 /** Gold of the threads, over the lamp's white. */
-const TINT = [1, 0.66, 0.2] as const;
+const TINT = [1, 0.64, 0.17] as const;
 
 export async function renderThreads(directions = 28): Promise<void> {
   const random = new Random(SEED);
@@ -87,7 +87,7 @@ export async function renderThreads(directions = 28): Promise<void> {
 function exposed(value: number): number {
   return value * EXPOSURE;
 }
-const EXPOSURE = 2.1;
+const EXPOSURE = 3.5;
 
 /** A slowly turning path across the grid, that rises and sinks a little. */
 function grow(random: Random, index: number): Elater {

@@ -108,7 +108,7 @@ function sizeOf(character: string, { kind, axesUm }: TrueBody): number[] {
   if (character === 'spore width' && kind === 'spore') return [axesUm.width];
   if (character === 'elater width' && kind === 'thread') return [axesUm.width];
   if (character === 'total height' && kind === 'head') return [axesUm.length];
-  if (character === 'body length' && kind === 'animal') return [axesUm.length];
+  if (character === 'cap diameter' && kind === 'cap') return [axesUm.width];
   return [];
 }
 
