@@ -1,7 +1,6 @@
 import type { NewFind, PlaceInput } from '../shared/contracts/finds.js';
-import type { SetScale } from '../shared/contracts/scales.js';
-import { UNCERTIFICATED_TOLERANCE_UM } from '../shared/scale/calibration.js';
 import { Hand, measurable } from './demo-bodies.js';
+import { calibrateBench, optics } from './demo-rigs.js';
 import type { DemoTeller } from './demo-teller.js';
 import { Random } from './pictures/random.js';
 
@@ -125,37 +124,6 @@ async function hemitrichia(teller: DemoTeller): Promise<void> {
   });
   clock.pass(1);
   await rooms.determinations.decide(findId, right);
-}
-
-/** The rigs of the bench: the oil objective is calibrated, the dry one not yet. */
-async function calibrateBench(teller: DemoTeller, spores: string, micrometer: string): Promise<void> {
-  const { rooms, people } = teller;
-  const rig = await rooms.rigs.add(people.photographer, {
-    ...{ name: 'Bench microscope', camera: 'monochrome and colour sensor, 1392 × 1040' },
-    remarks: 'Camera on the straight tube, adapter 1×.',
-  });
-  const oil = await rooms.rigs.addSetting(rig.id, {
-    ...{ name: '100× oil', objective: '100×/1.25 oil', magnification: 100, numericalAperture: 1.25 },
-    ...{ oneSitting: false, captureMode: 'full frame' },
-  });
-  await rooms.rigs.addSetting(rig.id, {
-    ...{ name: '40×', objective: '40×/0.65', magnification: 40, numericalAperture: 0.65 },
-    ...{ oneSitting: false, captureMode: 'full frame' },
-  });
-  const phone = await rooms.rigs.add(people.photographer, {
-    ...{ name: 'Telephone', camera: 'telephone' },
-    remarks: 'For the towpath; no two mountings are alike.',
-  });
-  await rooms.rigs.addSetting(phone.id, {
-    ...{ name: 'Clip-on lens', objective: 'clip-on, about 15×', magnification: null, numericalAperture: null },
-    ...{ oneSitting: true, captureMode: 'main camera, no zoom' },
-  });
-  const spacingUm = 10;
-  await rooms.rigs.calibrate(people.photographer, rig.id, oil.id, {
-    ...{ imageId: micrometer, spacingUm, toleranceUm: UNCERTIFICATED_TOLERANCE_UM },
-    marks: new Hand(new Random(42)).graduations(teller.truth('stage-micrometer.jpg'), spacingUm),
-  });
-  await rooms.scales.set(people.photographer, spores, { by: 'setting', settingId: oil.id });
 }
 
 /** Heights from the foot of the stalk to the tip, of the heads near the plane in focus: the scale holds there. */
@@ -328,13 +296,4 @@ function at(where: keyof typeof PLACES, observedOn: string, substrate: string): 
     visibility: 'public',
     heldUntil: null,
   };
-}
-
-/**
- * A scale by calculation that comes out as the picture was rendered: the pitch follows from it, to a
- * ten-thousandth of a micrometre.
- */
-function optics(umPerPx: number, magnification: number, relay: number): SetScale {
-  const pixelPitchUm = Number((umPerPx * magnification * relay).toFixed(4));
-  return { by: 'optics', pixelPitchUm, magnification, relay, binning: 1 };
 }

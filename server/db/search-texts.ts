@@ -73,6 +73,12 @@ export async function galleryTexts(
     ? ((await trx('taxa').select('id', 'name', 'parent_id', 'accepted_id')) as Name[])
     : [];
   const tree = new Map(names.map((name) => [name.id, name]));
+  const words = new Map<string, string>();
+  const wordsFor = (accepted: string): string => {
+    const known = words.get(accepted) ?? wordsOf(accepted, tree).join(' ');
+    words.set(accepted, known);
+    return known;
+  };
   return rows.map((row) => {
     const accepted = row.taxon_id === null ? null : acceptedOf(row.taxon_id, tree);
     return {
@@ -80,7 +86,7 @@ export async function galleryTexts(
       findId: row.find_id,
       uploadedAt: row.uploaded_at,
       taxonId: accepted,
-      names: [row.given_name ?? '', ...(accepted === null ? [] : wordsOf(accepted, tree))].join(' '),
+      names: `${row.given_name ?? ''} ${accepted === null ? '' : wordsFor(accepted)}`,
       place: row.public_words,
       people: `${row.owner} ${row.observer}`,
       structures: (structures.get(row.find_id) ?? []).join(' '),
