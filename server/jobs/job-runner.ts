@@ -18,6 +18,7 @@ const LEASE_MS = 15 * 60_000;
 /** 10 s, 40 s, 160 s, … */
 const FIRST_PAUSE_MS = 10_000;
 const KEEP_DONE_MS = 7 * 24 * 60 * 60_000;
+const FORGET_EVERY_MS = 60 * 60_000;
 /** how often to look for work that nobody announced */
 const LOOK_EVERY_MS = 2_000;
 
@@ -37,7 +38,7 @@ export interface JobRunnerOptions {
 /** Does the jobs of the table, kinds side by side, each as many at once as allowed. */
 export class JobRunner {
   private readonly running = new Map<string, Set<Promise<void>>>();
-  private timer: NodeJS.Timeout | null = null;
+  private timers: NodeJS.Timeout[] = [];
   private looking: Promise<void> | null = null;
   private lookAgain = false;
   private stopping = new AbortController();
@@ -54,7 +55,8 @@ export class JobRunner {
     this.stopping = new AbortController();
     void this.options.jobs.releaseAll().then(() => {
       if (!this.started) return;
-      this.timer = setInterval(() => this.nudge(), LOOK_EVERY_MS);
+      this.timers = [setInterval(() => this.nudge(), LOOK_EVERY_MS), setInterval(() => this.forget(), FORGET_EVERY_MS)];
+      this.forget();
       this.nudge();
     }, this.complain);
   }
@@ -62,8 +64,8 @@ export class JobRunner {
   /** Begins no more, aborts what runs and waits for its end; what was aborted waits for the next start. */
   async stop(): Promise<void> {
     this.started = false;
-    if (this.timer) clearInterval(this.timer);
-    this.timer = null;
+    this.timers.forEach((timer) => clearInterval(timer));
+    this.timers = [];
     this.stopping.abort();
     await this.looking;
     await this.idle();
@@ -146,7 +148,6 @@ export class JobRunner {
     await jobs.giveUp(job.id, error, clock.now().toISOString(), async (trx) => {
       await givenUp?.[job.kind]?.(trx, job);
     });
-    await jobs.forgetDoneBefore(after(clock.now(), -KEEP_DONE_MS));
   }
 
   /** Resolves when nothing runs. */
@@ -156,6 +157,11 @@ export class JobRunner {
       if (work.length === 0) return;
       await Promise.all(work);
     }
+  }
+
+  private forget(): void {
+    const { jobs, clock } = this.options;
+    jobs.forgetDoneBefore(after(clock.now(), -KEEP_DONE_MS)).catch(this.complain);
   }
 
   /** The table itself failed (a full disk): the job's lease runs out, or the next start takes it up. */

@@ -51,7 +51,8 @@ export class ImageService {
       bitDepth: image.bitDepth,
       format: image.format,
       sha256: image.sha256,
-      originalName: image.originalName,
+      // people put places into the names of their files
+      originalName: can(actor, 'image.read-original', thing, day) ? image.originalName : '',
       capture: image.capture,
       settingId: image.settingId,
       find: around.find,

@@ -90,6 +90,7 @@ export const ImageView = z.strictObject({
   bitDepth: z.number(),
   format: z.string(),
   sha256: z.string(),
+  /** empty for those who may not have the original: file names give places away */
   originalName: z.string(),
   capture: Capture,
   settingId: z.nullable(Id),

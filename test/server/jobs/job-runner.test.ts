@@ -98,6 +98,19 @@ describe('jobs', () => {
   });
   const closing: JobRunner[] = [];
 
+  it('forgets after a week what is done, and nothing else', async () => {
+    await enqueue('done');
+    await runner({ walk: async () => undefined }).drain();
+    await enqueue('failed', 'fall');
+    await runner({ fall: () => Promise.reject(new Error('no')) }, { attempts: { fall: 1 } }).drain();
+    clock.pass(8 * 24 * 60 * 60_000);
+    const run = runner({ other: async () => undefined });
+    run.start();
+    while ((await jobs.list(9)).length > 1) await new Promise((resolve) => setTimeout(resolve, 5));
+    await run.stop();
+    expect((await jobs.list(9)).map((job) => job.about)).toEqual(['failed']);
+  });
+
   it('does not run a job for ever that ends the server each time', async () => {
     const now = clock.now().toISOString();
     await enqueue('x');

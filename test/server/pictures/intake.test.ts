@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { readdirSync, readFileSync } from 'node:fs';
+import { readdirSync, readFileSync, renameSync } from 'node:fs';
 import { join } from 'node:path';
 import { deflateSync, crc32 } from 'node:zlib';
 import exifr from 'exifr';
@@ -231,6 +231,24 @@ describe('intake', () => {
     expect(await trayed(browser, id)).toMatchObject({ state: 'refused' });
     const other = await server.signIn(await server.addPerson('photographer'));
     await other.post(`/api/images/${id}/retry`).expect(404);
+  });
+
+  it('tries again when its process breaks down, and says so in the end', async () => {
+    const bytes = await jpegOf(300, 200);
+    const id = await server.app.bringIn({ file: bytes, name: 'a.jpg', ownerId: owner.id });
+    const sha = createHash('sha256').update(bytes).digest('hex');
+    const original = join(server.config.dataDir, 'originals', sha.slice(0, 2), sha);
+    renameSync(original, `${original}.away`); // what it works on is gone: no picture's own fault
+    for (let attempt = 0; attempt < 3; attempt++) {
+      expect((await trayed(browser, id))['refusal']).toBeNull();
+      await server.app.jobs.drain();
+      server.clock.pass(60 * 60_000);
+    }
+    expect(await trayed(browser, id)).toMatchObject({ state: 'refused', refusal: { code: 'intake-failed' } });
+    renameSync(`${original}.away`, original);
+    await browser.post(`/api/images/${id}/retry`).expect(200);
+    await server.app.jobs.drain();
+    expect(await trayed(browser, id)).toMatchObject({ state: 'ready' });
   });
 
   it('notices the same bytes and keeps them once, until the last picture of them goes', async () => {

@@ -60,6 +60,16 @@ describe('a picture', () => {
     });
   });
 
+  it('says what its file was called to its owner alone: such names give places away', async () => {
+    const observationId = await world.observation(await world.find(owner, { visibility: 'public' }), owner);
+    const id = await world.image(owner, { observationId, originalName: 'behind the third sleeper.jpg' });
+    expect((await browser.get(`/api/images/${id}`)).body).toMatchObject({
+      originalName: 'behind the third sleeper.jpg',
+    });
+    const seen = await (await server.visit()).get(`/api/images/${id}`);
+    expect(JSON.stringify(seen.body)).not.toContain('sleeper');
+  });
+
   it('stands beside those of its preparation', async () => {
     const observation = await world.observation(await world.find(owner), owner);
     const [slide, other] = [
