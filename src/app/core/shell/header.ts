@@ -1,7 +1,9 @@
 import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { MatMenuModule } from '@angular/material/menu';
-import { Router, RouterLink, RouterLinkActive } from '@angular/router';
+import { toSignal } from '@angular/core/rxjs-interop';
+import { NavigationEnd, Router, RouterLink, RouterLinkActive } from '@angular/router';
+import { filter, map, startWith } from 'rxjs';
 import { mdiAccountOutline, mdiCircleHalfFull, mdiMenu } from '@mdi/js';
 import { Icon } from '../../ui/icon/icon';
 import { Mark } from '../../ui/mark/mark';
@@ -34,6 +36,16 @@ export class Header {
       theme,
       words: { auto: $localize`As the system has it`, light: $localize`Light`, dark: $localize`Dark` }[theme],
     }),
+  );
+
+  /** Signing in leads back to where one was; from the gallery and the sign-in itself, to the desk. */
+  protected readonly then = toSignal(
+    this.router.events.pipe(
+      filter((event) => event instanceof NavigationEnd),
+      startWith(null),
+      map(() => (/^\/(finds|taxa)\b/.test(this.router.url) ? { then: this.router.url } : {})),
+    ),
+    { initialValue: {} },
   );
 
   protected choose(theme: Theme): void {

@@ -26,7 +26,10 @@ export class CarryAway {
   readonly picture = input.required<FindPicture>();
   readonly mayEdit = input(false);
 
-  protected readonly name = computed(() => this.picture().title || this.picture().altText);
+  protected readonly label = computed(() => {
+    const { title, altText } = this.picture();
+    return $localize`Carry away a copy of ${title || altText}:picture:`;
+  });
   protected readonly barred = computed(() => (this.picture().scale?.grounds ?? 'none') !== 'none');
   protected readonly original = computed(() => pathOf(imageRoutes.original, this.at()));
   protected readonly copies = computed(() => {

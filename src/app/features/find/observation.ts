@@ -1,8 +1,8 @@
 import { ChangeDetectionStrategy, Component, computed, input, output, signal } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
-import type { FindView, ObservationView } from '@shared/contracts/finds';
+import type { FindPicture, FindView, ObservationView } from '@shared/contracts/finds';
 import { dayWords } from '../../core/day-words';
-import { Each, Justified } from '../../ui/justified/justified';
+import { Each, Justified, type RowAspects } from '../../ui/justified/justified';
 import { AddPreparation } from './add-preparation';
 import { FindPictureCard } from './find-picture-card';
 import { conditionWords, kindWords } from './observation-words';
@@ -23,8 +23,10 @@ export class Observation {
   readonly changed = output<FindView>();
 
   protected readonly adding = signal(false);
-  /** narrower rooms than the gallery's */
-  protected readonly rows = { s: 1.5, m: 2.8, l: 3.2, xl: 4.4 };
+  /** In narrower rooms than the gallery's; a picture that is alone is shown larger. */
+  protected rowsFor(pictures: readonly FindPicture[]): RowAspects {
+    return pictures.length === 1 ? { s: 1.5, m: 2, l: 2.3, xl: 3 } : { s: 1.5, m: 2.8, l: 3.2, xl: 4.4 };
+  }
 
   protected readonly day = computed(() => dayWords(this.observation().observedOn));
   protected readonly kind = computed(() => kindWords(this.observation().kind));

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import type { FindView } from '@shared/contracts/finds';
 import { SessionStore } from '../../core/session-store';
-import { coordinateWords, radiusWords } from './place-words';
+import { aroundWords } from './place-words';
 
 /** Where: what everybody is shown, and the exact place for the few who may see it, marked as such. */
 @Component({
@@ -16,13 +16,11 @@ export class PlacePanel {
 
   protected readonly publicPlace = computed(() => {
     const place = this.find().publicPlace;
-    return { words: place.words, radius: radiusWords(place.uncertaintyM), coordinates: coordinateWords(place) };
+    return { words: place.words, around: aroundWords(place) };
   });
   protected readonly exact = computed(() => {
     const place = this.find().exactPlace;
-    return (
-      place && { words: place.words, radius: radiusWords(place.uncertaintyM), coordinates: coordinateWords(place) }
-    );
+    return place && { words: place.words, around: aroundWords(place) };
   });
   protected readonly isFinder = computed(() => this.user()?.id === this.find().owner.id);
   protected readonly readers = computed(() =>

@@ -1,4 +1,4 @@
-import { coordinateWords, radiusWords } from './place-words';
+import { aroundWords, coordinateWords, radiusWords } from './place-words';
 
 describe('radiusWords', () => {
   it('rounds outward to two digits, so that the place is never said to be better known than it is', () => {
@@ -25,5 +25,14 @@ describe('coordinateWords', () => {
 
   it('has nothing to write where one of them is missing', () => {
     expect(coordinateWords({ latitude: 1, longitude: null })).toBeNull();
+  });
+});
+
+describe('aroundWords', () => {
+  it('says the circle, or what is known of it', () => {
+    const place = { latitude: 56.32, longitude: 2.9, uncertaintyM: 1282 };
+    expect(aroundWords(place)).toBe('within 1.3\u00A0km of 56.32°\u00A0N, 2.9°\u00A0E');
+    expect(aroundWords({ ...place, uncertaintyM: null })).toBe('56.32°\u00A0N, 2.9°\u00A0E');
+    expect(aroundWords({ ...place, latitude: null })).toBe('within 1.3\u00A0km');
   });
 });

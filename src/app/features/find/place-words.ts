@@ -21,3 +21,9 @@ export function coordinateWords({ latitude, longitude }: Coordinates): string | 
   const east = longitude < 0 ? $localize`W` : $localize`E`;
   return `${Math.abs(latitude)}°${NO_BREAK_SPACE}${north}, ${Math.abs(longitude)}°${NO_BREAK_SPACE}${east}`;
 }
+
+/** "within 1.3 km of 56.32° N, 2.9° E", or as much of it as is known. */
+export function aroundWords(place: Coordinates & { readonly uncertaintyM: number | null }): string | null {
+  const [radius, coordinates] = [radiusWords(place.uncertaintyM), coordinateWords(place)];
+  return radius && coordinates ? $localize`${radius}:radius: of ${coordinates}:coordinates:` : (radius ?? coordinates);
+}

@@ -55,10 +55,18 @@ describe('seriesCard', () => {
       size({ dimension: 'width', minUm: 6, maxUm: 7, year: null }),
     ];
     const { sizes } = seriesCard(series({}), { fruitBodies: 1, publishedSizes });
-    expect(sizes.map((each) => [each.dimension, each.published])).toEqual([
+    expect(sizes.map((each) => [each.dimension, each.plot.published])).toEqual([
       ['length', [{ name: 'Trichia varia', source: 'Macbride 1922', low: 11, high: 14 }]],
       ['width', [{ name: 'Trichia varia', source: 'Macbride, year unknown', low: 6, high: 7 }]],
     ]);
+  });
+
+  it('writes and draws large things in mm', () => {
+    const tall = series({ structure: 'stalk', bodies: [body(2000, null), body(2400, null)] });
+    const publishedSizes = [size({ structure: 'stalk', minUm: 2000, maxUm: 3000 })];
+    const [line] = seriesCard(tall, { fruitBodies: 1, publishedSizes }).sizes;
+    expect([line?.plot.unit, line?.plot.values]).toEqual(['mm', [2, 2.4]]);
+    expect(line?.printed).toEqual([{ name: 'Trichia varia', words: '2–3\u00A0mm, Macbride 1922' }]);
   });
 
   it('says how the edge was taken, and that the ornament was not spoken of', () => {

@@ -2,7 +2,10 @@ import type { FindView } from '@shared/contracts/finds';
 import type { SeriesView } from '@shared/contracts/series';
 import type { Scale } from '@shared/scale/scale';
 import { notation } from '@shared/taxonomy/spore-notation';
+import { MICROMETRES_PER, unitFor } from '@shared/units/length';
+import { rangeWords } from '../../core/range-words';
 import { groundsOf, summaryOf, valuesUm } from '../../core/series-summary';
+import { shortSource } from '../../core/source-words';
 import { structureWords } from '../../core/structure-words';
 import type { PublishedRange } from '../../ui/strip-plot/strip-plot';
 
@@ -16,8 +19,15 @@ export interface SizeLine {
   readonly um: number;
   /** combined standard uncertainty of the mean, µm */
   readonly u: number;
-  readonly values: readonly number[];
-  readonly published: readonly PublishedRange[];
+  /** what books say, in words */
+  readonly printed: readonly { readonly name: string; readonly words: string }[];
+  /** all in `unit` */
+  readonly plot: {
+    readonly unit: 'µm' | 'mm';
+    readonly values: readonly number[];
+    readonly published: readonly PublishedRange[];
+    readonly mean: { readonly value: number; readonly expanded: number };
+  };
 }
 
 /** One series as the find shows it. */
@@ -49,20 +59,36 @@ export function seriesCard(series: SeriesView, find: Pick<FindView, 'fruitBodies
 function sizeLine(
   series: SeriesView,
   dimension: 'length' | 'width',
-  published: FindView['publishedSizes'],
+  publishedSizes: FindView['publishedSizes'],
 ): SizeLine[] {
   const summary = summaryOf(series, dimension);
   if (!summary) return [];
-  const ranges = published
-    .filter((size) => size.structure === series.structure && size.dimension === dimension)
-    .map((size) => ({ name: size.taxonName, source: sourceOf(size), low: size.minUm, high: size.maxUm }));
-  const words = dimension === 'length' ? $localize`along` : $localize`across`;
-  return [{ dimension, words, um: summary.mean, u: summary.u, values: valuesUm(series, dimension), published: ranges }];
-}
-
-function sourceOf({ source, year }: FindView['publishedSizes'][number]): string {
-  const author = source.split(/[,(]/)[0]?.trim() ?? source;
-  return year === null ? $localize`${author}:author:, year unknown` : `${author} ${year}`;
+  const printed = publishedSizes.filter((size) => size.structure === series.structure && size.dimension === dimension);
+  const unit = unitFor(summary.mean);
+  const inUnit = (um: number) => um / MICROMETRES_PER[unit];
+  return [
+    {
+      dimension,
+      words: dimension === 'length' ? $localize`along` : $localize`across`,
+      um: summary.mean,
+      u: summary.u,
+      printed: printed.map((size) => ({
+        name: size.taxonName,
+        words: `${rangeWords(size.minUm, size.maxUm)}, ${shortSource(size.source, size.year)}`,
+      })),
+      plot: {
+        unit,
+        values: valuesUm(series, dimension).map(inUnit),
+        published: printed.map((size) => ({
+          name: size.taxonName,
+          source: shortSource(size.source, size.year),
+          low: inUnit(size.minUm),
+          high: inUnit(size.maxUm),
+        })),
+        mean: { value: inUnit(summary.mean), expanded: inUnit(summary.U) },
+      },
+    },
+  ];
 }
 
 /** Of the spores that have a length in µm; one collection, the find itself. */

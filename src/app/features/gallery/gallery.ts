@@ -12,6 +12,7 @@ import { Empty } from '../../ui/empty/empty';
 import { renditionUrl } from '../../ui/picture/picture';
 import { ProblemBox } from '../../ui/problem/problem';
 import { Rule } from '../../ui/rule/rule';
+import { TaxonName } from '../../ui/taxon-name/taxon-name';
 import { FilterLine } from './filter-line';
 import { GalleryStore, type GalleryFilter } from './gallery-store';
 import { Hero } from './hero';
@@ -21,7 +22,7 @@ import { WallSkeleton } from './wall-skeleton';
 /** The public gallery: the newest picture large, and below it the wall. What is looked for stands in the address. */
 @Component({
   selector: 'app-gallery',
-  imports: [MatButtonModule, RouterLink, Empty, FilterLine, Hero, ProblemBox, Rule, Wall, WallSkeleton],
+  imports: [MatButtonModule, RouterLink, Empty, FilterLine, Hero, ProblemBox, Rule, TaxonName, Wall, WallSkeleton],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './gallery.html',
   styleUrl: './gallery.scss',

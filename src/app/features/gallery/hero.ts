@@ -13,12 +13,12 @@ import { TaxonName } from '../../ui/taxon-name/taxon-name';
   imports: [MatButtonModule, RouterLink, Picture, Rule, TaxonName],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
-    <section i18n-aria-label aria-label="Newest picture">
+    <section i18n-aria-label aria-label="New on the wall">
       <a class="picture" [routerLink]="['/finds', tile().findId]" tabindex="-1" aria-hidden="true">
         <app-picture [tile]="tile()" [first]="true" sizes="(max-width: 900px) 100vw, 70vw" />
       </a>
       <div class="label">
-        <p class="kind" i18n>Newest picture</p>
+        <p class="kind" i18n>New on the wall</p>
         <h2><app-taxon-name [name]="tile().name" /></h2>
         <p class="title">{{ tile().title }}</p>
         <p class="about soft">{{ light() }} · {{ tile().publicPlace }} · {{ tile().findNumber }}</p>

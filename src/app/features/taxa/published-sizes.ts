@@ -1,5 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import type { PublishedSizeView } from '@shared/contracts/finds';
+import { rangeWords } from '../../core/range-words';
+import { fullSource } from '../../core/source-words';
 import { structureWords } from '../../core/structure-words';
 
 /** What books say, with the book: what is not known of a printed size is said to be unknown. */
@@ -13,7 +15,7 @@ import { structureWords } from '../../core/structure-words';
           <thead>
             <tr>
               <th scope="col" i18n>Structure</th>
-              <th scope="col" class="number" i18n>Size, µm</th>
+              <th scope="col" class="number" i18n>Size</th>
               <th scope="col" i18n>Source</th>
               <th scope="col" i18n>Page</th>
             </tr>
@@ -26,7 +28,7 @@ import { structureWords } from '../../core/structure-words';
                 </th>
                 <td class="number numbers">{{ row.range }}</td>
                 <td>
-                  {{ row.source }}, {{ row.year }}
+                  {{ row.source }}
                   @if (!row.seen) {
                     <br /><span class="memory" i18n>from memory; not yet checked against the book</span>
                   }
@@ -79,9 +81,8 @@ export class PublishedSizes {
       id,
       structure: structureWords(structure),
       dimension: dimension === 'length' ? $localize`along` : $localize`across`,
-      range: minUm === maxUm ? String(minUm) : `${minUm}–${maxUm}`,
-      source: source || $localize`source unknown`,
-      year: year === null ? $localize`year unknown` : String(year),
+      range: rangeWords(minUm, maxUm),
+      source: fullSource(source, year),
       page: page || $localize`unknown`,
       seen,
     })),

@@ -1,4 +1,4 @@
-import { ComponentFixture, TestBed } from '@angular/core/testing';
+import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import type { ImageTile } from '@shared/contracts/images';
 import { ScaleBar } from './scale-bar';
 
