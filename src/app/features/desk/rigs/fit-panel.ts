@@ -31,6 +31,7 @@ import { ResidualPlot } from './residual-plot';
       background: var(--rust);
     }
     .micrometer {
+      flex: 1;
       background: var(--lichen);
     }
     .parts {
@@ -81,11 +82,15 @@ export class FitPanel {
     const um = this.fitted()?.fit.spanUm ?? 0;
     return formatLength(um, um < 1000 ? 0 : 2);
   });
-  protected readonly sharesLabel = computed(() => {
-    const seen = this.fitted();
-    const share = seen ? Math.round((100 * seen.fromMarks ** 2) / (seen.fromMarks ** 2 + seen.fromMicrometer ** 2 || 1)) : 0;
-    return $localize`${share}:share: % of the doubt comes from the marks, the rest from the micrometer`;
+  /** per cent of the variance; the rest is the micrometer's */
+  protected readonly marksShare = computed(() => {
+    const { fromMarks, fromMicrometer } = this.fitted() ?? { fromMarks: 0, fromMicrometer: 0 };
+    const whole = fromMarks ** 2 + fromMicrometer ** 2;
+    return whole === 0 ? 0 : Math.round((100 * fromMarks ** 2) / whole);
   });
+  protected readonly sharesLabel = computed(
+    () => $localize`${this.marksShare()}:share: % of the doubt comes from the marks, the rest from the micrometer`,
+  );
 
   protected readonly advice = computed(() => {
     const seen = this.fitted();
