@@ -17,6 +17,8 @@ export interface TrueBody {
   readonly center: TruePoint;
   /** True size; for a thread, its width alone is of use, and length is along the path. */
   readonly axesUm: { readonly length: number; readonly width: number };
+  /** Of a body that leans or is seen from above: what its length in the picture comes to at the picture's scale. */
+  readonly seenLengthUm?: number;
   /** Direction of the long axis in the picture, degrees, clockwise from the right (y runs down). */
   readonly angle: number;
   /** µm from the plane in focus, positive towards the lens. */

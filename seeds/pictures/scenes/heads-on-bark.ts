@@ -198,6 +198,7 @@ function headBodies(heads: readonly Head[], camera: Camera): TrueBody[] {
       kind: 'head',
       center: { x: middle.x, y: middle.y },
       axesUm: { length: head.height * 1000, width: head.width * 1000 },
+      seenLengthUm: Math.hypot(base.x - tip.x, base.y - tip.y) * camera.umPerPx,
       angle: (Math.atan2(base.y - tip.y, base.x - tip.x) * 180) / Math.PI,
       focus: middle.before * 1000,
       ...(cut ? { cut } : {}),
