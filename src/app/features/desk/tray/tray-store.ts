@@ -42,6 +42,7 @@ export class TrayStore {
   private readonly queue = inject(UploadQueue);
   private readonly document = inject(DOCUMENT);
   private readonly asked = new Subject<void>();
+  private readonly networkIsBack = this.document.defaultView ? fromEvent(this.document.defaultView, 'online') : EMPTY;
   private readonly listed = signal<readonly TrayPicture[] | null>(null);
   /** taken out already on screen, and not yet at the server */
   private readonly leaving = signal<ReadonlySet<string>>(new Set());
@@ -66,10 +67,10 @@ export class TrayStore {
 
   /**
    * Keeps the tray up to date while somebody is subscribed: at once, whenever asked, when an upload has
-   * arrived, and again and again while anything is being read and the page is in sight.
+   * arrived, when the network is back, and again and again while anything is being read and the page is in sight.
    */
   readonly live: Observable<void> = defer(() =>
-    merge(this.asked, this.queue.arrived).pipe(
+    merge(this.asked, this.queue.arrived, this.networkIsBack).pipe(
       startWith(undefined),
       switchMap(() => this.load().pipe(repeat({ delay: () => this.nextLook() }))),
       map(() => undefined),
