@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { seriesRoutes, type SeriesView } from '@shared/contracts/series';
 import { structureOf } from '@shared/annotations/structures';
-import { quantityText, roundToUncertainty } from '@shared/scale/rounding';
+import { quantityText } from '@shared/scale/rounding';
 import type { Scale } from '@shared/scale/scale';
 import { decimalsFor } from '@shared/scale/decimals';
 import { pathOf } from '../../core/api';
@@ -51,7 +51,9 @@ export class SeriesCard {
   protected readonly q = computed(() => {
     const q = this.figures()?.q;
     if (!q) return null;
-    return q.u > 0 ? roundToUncertainty(q.mean, q.U, 1) : { value: q.mean.toFixed(2), uncertainty: null };
+    // a ratio is printed to hundredths at most: the thousandths of a sure mean say nothing of the bodies
+    const decimals = q.u > 0 ? Math.min(2, decimalsFor(q.U, 2)) : 2;
+    return { value: q.mean.toFixed(decimals), uncertainty: q.u > 0 ? Math.max(q.U, 0.01).toFixed(decimals) : null };
   });
 
   private line({ unit, grounds, dimensions }: SeriesFigures, { dimension, summary, values }: DimensionFigures) {
