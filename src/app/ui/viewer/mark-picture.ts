@@ -94,6 +94,14 @@ export class MarkPicture {
     if (mark) this.canvas().reveal(mark.at);
   }
 
+  protected numberLabel({ at }: RulingMark): string {
+    return $localize`Number of this graduation, marked at ${at.x.toFixed(1)}:x:, ${at.y.toFixed(1)}:y:`;
+  }
+
+  protected removeLabel({ index }: RulingMark): string {
+    return $localize`Take mark ${index}:number: away`;
+  }
+
   protected keyDown(event: KeyboardEvent): void {
     if (event.target instanceof HTMLInputElement || event.ctrlKey || event.metaKey || event.altKey) return;
     if (!this.obey(event)) return;
