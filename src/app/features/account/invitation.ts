@@ -50,7 +50,7 @@ export class Invitation {
   });
 
   protected accept(element: HTMLFormElement): void {
-    const named = this.invitation.value()?.email != null;
+    const named = Boolean(this.invitation.value()?.email);
     if (named) this.form.controls.email.disable(); // then it is not asked
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);

@@ -6,7 +6,12 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { SessionStore } from '../../core/session-store';
 import { SignIn } from './sign-in';
 
-const IMRE = { name: 'Imre Waddell', role: 'photographer' as const, email: 'imre@x.example', password: 'under the sleepers' };
+const IMRE = {
+  name: 'Imre Waddell',
+  role: 'photographer' as const,
+  email: 'imre@x.example',
+  password: 'under the sleepers',
+};
 
 describe('signing in', () => {
   let fixture: ComponentFixture<SignIn>;

@@ -42,7 +42,10 @@ export class Desk {
   protected readonly rigRows = computed(() => (this.rigs.error() ? [] : (this.rigs.value() ?? [])));
   protected readonly waitingCount = computed(() => this.tray.ready().length + this.tray.beingRead().length);
   protected readonly waiting = computed(() =>
-    this.tray.ready().flatMap(({ image }) => image ?? []).slice(0, STRIP),
+    this.tray
+      .ready()
+      .flatMap(({ image }) => image ?? [])
+      .slice(0, STRIP),
   );
   protected readonly nextSteps = computed(() =>
     nextSteps({ waiting: this.tray.ready().length, finds: this.findRows(), rigs: this.rigRows() }),

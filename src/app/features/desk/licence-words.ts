@@ -9,5 +9,8 @@ export const LICENCE_WORDS: Readonly<Record<Licence, { readonly title: string; r
   'by-nc-sa': { title: 'CC BY-NC-SA', means: $localize`not to earn money; the same licence on what they make of it` },
   'by-nd': { title: 'CC BY-ND', means: $localize`anybody may pass it on unchanged, if they name you` },
   'by-nc-nd': { title: 'CC BY-NC-ND', means: $localize`pass it on unchanged, name you, earn no money` },
-  'all-rights-reserved': { title: $localize`All rights kept`, means: $localize`shown here; for anything else they must ask you` },
+  'all-rights-reserved': {
+    title: $localize`All rights kept`,
+    means: $localize`shown here; for anything else they must ask you`,
+  },
 };

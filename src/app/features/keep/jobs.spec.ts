@@ -4,7 +4,15 @@ import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { Jobs } from './jobs';
 
-const DONE = { id: 'd', kind: 'intake', about: 'one.jpg', state: 'done', attempts: 1, lastError: null, createdAt: '2025-11-03T10:00:00.000Z' };
+const DONE = {
+  id: 'd',
+  kind: 'intake',
+  about: 'one.jpg',
+  state: 'done',
+  attempts: 1,
+  lastError: null,
+  createdAt: '2025-11-03T10:00:00.000Z',
+};
 const FAILED = { ...DONE, id: 'f', about: 'two.tif', state: 'failed', attempts: 5, lastError: 'took too long' };
 
 describe('work on the keeper’s desk', () => {

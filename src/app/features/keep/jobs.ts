@@ -14,6 +14,12 @@ const STATE_WORDS: Readonly<Record<JobRow['state'], string>> = {
   failed: $localize`failed`,
 };
 
+const KIND_WORDS: Readonly<Record<string, string>> = {
+  intake: $localize`take a picture in`,
+  mail: $localize`send a mail`,
+  'forget-files': $localize`clear the files of a discarded picture`,
+};
+
 /** What needs the keeper comes first. */
 const ORDER: readonly JobRow['state'][] = ['failed', 'working', 'waiting', 'done'];
 
@@ -33,7 +39,9 @@ export class Jobs {
   protected readonly jobs = this.api.resource(keepRoutes.jobs, () => ({}));
   protected readonly problem = signal<ApiProblem | null>(null);
   protected readonly shown = computed(() =>
-    (this.jobs.error() ? [] : (this.jobs.value() ?? [])).toSorted((a, b) => ORDER.indexOf(a.state) - ORDER.indexOf(b.state)),
+    (this.jobs.error() ? [] : (this.jobs.value() ?? [])).toSorted(
+      (a, b) => ORDER.indexOf(a.state) - ORDER.indexOf(b.state),
+    ),
   );
   protected readonly summary = computed(() =>
     ORDER.map((state) => ({ state, count: this.shown().filter((job) => job.state === state).length }))
@@ -41,6 +49,11 @@ export class Jobs {
       .map(({ state, count }) => `${count} ${STATE_WORDS[state]}`)
       .join(' · '),
   );
+
+  /** a kind that is new here is shown as the server calls it */
+  protected kindWords(kind: string): string {
+    return KIND_WORDS[kind] ?? kind;
+  }
 
   protected retry(jobId: string): void {
     this.problem.set(null);

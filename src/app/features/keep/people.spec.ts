@@ -4,7 +4,14 @@ import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { People } from './people';
 
-const TAMSIN = { id: 't', name: 'Tamsin Pell', email: 't@x.example', role: 'keeper', createdAt: '2025-11-01T08:00:00.000Z', lastSeenAt: null };
+const TAMSIN = {
+  id: 't',
+  name: 'Tamsin Pell',
+  email: 't@x.example',
+  role: 'keeper',
+  createdAt: '2025-11-01T08:00:00.000Z',
+  lastSeenAt: null,
+};
 const IMRE = { ...TAMSIN, id: 'i', name: 'Imre Waddell', email: 'i@x.example', role: 'photographer' };
 const OPEN = { id: 'inv', email: 'new@x.example', role: 'editor', expiresAt: '2025-11-20T00:00:00.000Z' };
 

@@ -70,7 +70,8 @@ export class People {
 
   protected withdraw(invitationId: string): void {
     this.api.call(keepRoutes.withdrawInvitation, { params: { invitationId } }).subscribe({
-      next: () => this.change((view) => ({ ...view, invitations: view.invitations.filter(({ id }) => id !== invitationId) })),
+      next: () =>
+        this.change((view) => ({ ...view, invitations: view.invitations.filter(({ id }) => id !== invitationId) })),
       error: (error: unknown) => this.problem.set(toApiProblem(error)),
     });
   }

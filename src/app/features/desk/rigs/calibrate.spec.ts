@@ -32,7 +32,9 @@ describe('calibrating', () => {
   /** with plain spaces where numbers and units stand together by no-break ones */
   const text = () => ((fixture.nativeElement as HTMLElement).textContent ?? '').replaceAll('\u00A0', ' ');
   const button = (words: string) =>
-    [...(fixture.nativeElement as HTMLElement).querySelectorAll('button')].find((one) => one.textContent?.includes(words))!;
+    [...(fixture.nativeElement as HTMLElement).querySelectorAll('button')].find((one) =>
+      one.textContent?.includes(words),
+    )!;
   const picture = () => fixture.debugElement.query(By.directive(FakeMarkPicture)).componentInstance as FakeMarkPicture;
 
   beforeEach(async () => {
@@ -79,7 +81,13 @@ describe('calibrating', () => {
     const { request, flush } = bound(http.expectOne('/api/rigs/rig/settings/setting/calibrations'));
     expect(request.body).toEqual({ imageId: 'micrometer', marks: MARKS, spacingUm: 10, toleranceUm: 1.5 });
     flush({
-      calibration: { umPerPxX: 0.2150538, umPerPxY: 0.2150538, relativeUncertainty: 0.000879, imageId: 'micrometer', validUntil: null },
+      calibration: {
+        umPerPxX: 0.2150538,
+        umPerPxY: 0.2150538,
+        relativeUncertainty: 0.000879,
+        imageId: 'micrometer',
+        validUntil: null,
+      },
       scaledImages: 12,
     });
     await fixture.whenStable();

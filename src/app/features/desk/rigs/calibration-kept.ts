@@ -34,7 +34,10 @@ import { scaleWords } from './calibration-words';
         <span i18n>
           {candidates().length, plural,
             =1 {1 picture in your tray has this size and no scale. Was it taken with this setting?}
-            other {{{ candidates().length }} pictures in your tray have this size and no scale. Were they taken with this setting?}
+            other {
+              {{ candidates().length }} pictures in your tray have this size and no scale. Were they taken with this
+              setting?
+            }
           }
         </span>
         <button type="button" mat-stroked-button [disabled]="busy()" (click)="give()" i18n>Yes, give this scale</button>

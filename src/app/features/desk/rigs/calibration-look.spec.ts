@@ -49,7 +49,9 @@ describe('the live fit', () => {
   it('says what is wrong with the marks by its code', () => {
     expect(look({ ...LOOKED, marks: [at(10, 10, 0), at(14, 10, 1)] })).toMatchObject({ code: 'reference-too-short' });
     expect(look({ ...LOOKED, marks: [at(10, 10, 3), at(900, 10, 3)] })).toMatchObject({ state: 'problem' });
-    expect(look({ ...LOOKED, marks: [at(10, 10, 0), at(900, 10, 9)], spacingUm: Number.NaN })).toMatchObject({ code: 'not-positive' });
+    expect(look({ ...LOOKED, marks: [at(10, 10, 0), at(900, 10, 9)], spacingUm: Number.NaN })).toMatchObject({
+      code: 'not-positive',
+    });
   });
 });
 

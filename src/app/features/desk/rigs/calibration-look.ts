@@ -1,5 +1,10 @@
 import { DomainError } from '@shared/errors';
-import { calibrationScale, fitCalibration, graduationsFromIndexedMarks, type CalibrationFit } from '@shared/scale/calibration';
+import {
+  calibrationScale,
+  fitCalibration,
+  graduationsFromIndexedMarks,
+  type CalibrationFit,
+} from '@shared/scale/calibration';
 import type { CalibrationView, Mark } from '@shared/contracts/rigs';
 import type { Scale } from '@shared/scale/scale';
 

@@ -59,8 +59,16 @@ export class HistoryPlot {
       U: 2 * calibration.umPerPxX * calibration.relativeUncertainty,
       lapsed: calibration.validUntil !== null,
     }));
-    const x = along(all.map(({ at }) => at), EDGE, WIDTH - EDGE);
-    const y = along(all.flatMap(({ value, U }) => [value - U, value + U]), HEIGHT - EDGE, EDGE);
+    const x = along(
+      all.map(({ at }) => at),
+      EDGE,
+      WIDTH - EDGE,
+    );
+    const y = along(
+      all.flatMap(({ value, U }) => [value - U, value + U]),
+      HEIGHT - EDGE,
+      EDGE,
+    );
     return all.map(({ id, at, value, U, lapsed }) => ({
       id,
       lapsed,

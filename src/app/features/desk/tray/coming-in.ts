@@ -64,7 +64,10 @@ export class ComingIn {
 
   protected retryAll(): void {
     this.queue.retryAll();
-    this.tray.refused().filter((picture) => this.mayHelp(picture)).forEach((picture) => this.tray.retry(picture));
+    this.tray
+      .refused()
+      .filter((picture) => this.mayHelp(picture))
+      .forEach((picture) => this.tray.retry(picture));
   }
 
   protected discardAll(): void {

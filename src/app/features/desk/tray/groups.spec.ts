@@ -22,7 +22,8 @@ function taken(name: string, local: string | null, exactPlace: TrayPicture['exac
   };
 }
 
-const namesOf = (pictures: readonly TrayPicture[]) => groupPictures(pictures).map((group) => group.pictures.map(({ name }) => name));
+const namesOf = (pictures: readonly TrayPicture[]) =>
+  groupPictures(pictures).map((group) => group.pictures.map(({ name }) => name));
 
 describe('suggested finds', () => {
   it('puts together what was taken within ten minutes of the one before, in order of capture', () => {
@@ -46,8 +47,13 @@ describe('suggested finds', () => {
   it('begins a new one after a walk: 0.001° of latitude is 111 m', () => {
     const far = { ...HERE, latitude: HERE.latitude + 0.001 };
     const near = { ...HERE, latitude: HERE.latitude + 0.0003 };
-    expect(namesOf([taken('1', '2025-11-03T10:42:00', HERE), taken('2', '2025-11-03T10:43:00', far)])).toEqual([['1'], ['2']]);
-    expect(namesOf([taken('1', '2025-11-03T10:42:00', HERE), taken('2', '2025-11-03T10:43:00', near)])).toEqual([['1', '2']]);
+    expect(namesOf([taken('1', '2025-11-03T10:42:00', HERE), taken('2', '2025-11-03T10:43:00', far)])).toEqual([
+      ['1'],
+      ['2'],
+    ]);
+    expect(namesOf([taken('1', '2025-11-03T10:42:00', HERE), taken('2', '2025-11-03T10:43:00', near)])).toEqual([
+      ['1', '2'],
+    ]);
   });
 
   it('puts what has no date last, by the numbers in its name', () => {

@@ -142,7 +142,10 @@ export class PictureGrid {
     this.focusedId.set(id);
     // After its tabindex is 0 on the page.
     afterNextRender(
-      () => this.grid().nativeElement.querySelector<HTMLElement>(`#${CSS.escape(`tray-${id}`)}`)?.focus(),
+      () =>
+        this.grid()
+          .nativeElement.querySelector<HTMLElement>(`#${CSS.escape(`tray-${id}`)}`)
+          ?.focus(),
       { injector: this.injector },
     );
   }

@@ -13,11 +13,15 @@ export type SizeAnswer = 'reduced' | 'cropped';
     <h2 mat-dialog-title i18n>Reduced or cropped?</h2>
     <mat-dialog-content>
       <p i18n>
-        {count, plural, =1 {One picture does} other {{{ count }} pictures do}} not have the size of the calibrated frame. What
-        happened on the way?
+        {count, plural, =1 {One picture does} other {{{ count }} pictures do}} not have the size of the calibrated
+        frame. What happened on the way?
       </p>
       <p><button mat-stroked-button mat-dialog-close="reduced" i18n>Reduced: the whole frame, fewer pixels</button></p>
-      <p><button mat-stroked-button mat-dialog-close="cropped" i18n>Cropped: a part of the frame, pixel for pixel</button></p>
+      <p>
+        <button mat-stroked-button mat-dialog-close="cropped" i18n>
+          Cropped: a part of the frame, pixel for pixel
+        </button>
+      </p>
       <p class="soft" i18n>If you do not know, leave them without a scale: a wrong one is worse.</p>
     </mat-dialog-content>
     <mat-dialog-actions>

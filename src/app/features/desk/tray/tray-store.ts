@@ -95,21 +95,30 @@ export class TrayStore {
   /** The same change for many, shown at once; what fails is said and looked up again. */
   edit(ids: Iterable<string>, change: Pick<EditImage, 'light' | 'role'>): void {
     const chosen = new Set(ids);
-    this.listed.update((list) => list?.map((picture) => (chosen.has(picture.id) ? { ...picture, ...change } : picture)) ?? null);
+    this.listed.update(
+      (list) => list?.map((picture) => (chosen.has(picture.id) ? { ...picture, ...change } : picture)) ?? null,
+    );
     const all = [...chosen].map((imageId) => this.api.call(imageRoutes.edit, { params: { imageId }, body: change }));
-    from(all).pipe(mergeAll(AT_ONCE)).subscribe({
-      error: (error: unknown) => {
-        this.problem.set(toApiProblem(error));
-        this.refresh();
-      },
-    });
+    from(all)
+      .pipe(mergeAll(AT_ONCE))
+      .subscribe({
+        error: (error: unknown) => {
+          this.problem.set(toApiProblem(error));
+          this.refresh();
+        },
+      });
   }
 
   /** Takes pictures out, after a while in which `keep` has them back. */
   discard(ids: Iterable<string>): void {
     const going = [...ids];
     this.leaving.update((leaving) => new Set([...leaving, ...going]));
-    going.forEach((id) => this.pendingDiscards.set(id, setTimeout(() => this.discardNow(id), UNDO_MS)));
+    going.forEach((id) =>
+      this.pendingDiscards.set(
+        id,
+        setTimeout(() => this.discardNow(id), UNDO_MS),
+      ),
+    );
   }
 
   keep(ids: Iterable<string>): void {

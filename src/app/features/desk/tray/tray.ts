@@ -83,7 +83,13 @@ export class Tray {
   /** pictures that left the tray are let go */
   protected readonly selection = linkedSignal<readonly TrayPicture[], Selection>({
     source: this.tray.ready,
-    computation: (ready, before) => (before ? keepPresent(before.value, ready.map(({ id }) => id)) : NOTHING),
+    computation: (ready, before) =>
+      before
+        ? keepPresent(
+            before.value,
+            ready.map(({ id }) => id),
+          )
+        : NOTHING,
   });
   /** in the order that is seen */
   protected readonly chosen = computed(() =>
@@ -142,7 +148,9 @@ export class Tray {
 
   protected makeFind(): void {
     this.openSheet(MakeFind, (find, count) =>
-      count === 1 ? $localize`${find.number}:number: made of 1 picture.` : $localize`${find.number}:number: made of ${count}:count: pictures.`,
+      count === 1
+        ? $localize`${find.number}:number: made of 1 picture.`
+        : $localize`${find.number}:number: made of ${count}:count: pictures.`,
     );
   }
 
@@ -178,17 +186,15 @@ export class Tray {
     const ids = this.chosen().map(({ id }) => id);
     this.tray.discard(ids);
     this.grid()?.focus();
-    const said = ids.length === 1 ? $localize`1 picture discarded.` : $localize`${ids.length}:count: pictures discarded.`;
+    const said =
+      ids.length === 1 ? $localize`1 picture discarded.` : $localize`${ids.length}:count: pictures discarded.`;
     this.snackBar
       .open(said, $localize`Undo`, { duration: UNDO_MS })
       .onAction()
       .subscribe(() => this.tray.keep(ids));
   }
 
-  private openSheet(
-    sheet: typeof MakeFind | typeof AddToFind,
-    words: (find: FindView, count: number) => string,
-  ): void {
+  private openSheet(sheet: typeof MakeFind | typeof AddToFind, words: (find: FindView, count: number) => string): void {
     const pictures = this.chosen();
     this.dialog
       .open<MakeFind | AddToFind, readonly TrayPicture[], FindView>(sheet, { ...SHEET, data: pictures })

@@ -2,7 +2,9 @@ import { describe, expect, it } from 'vitest';
 import { notTaken } from './picture-files';
 
 const bytes = (...values: (number | string)[]) =>
-  new Uint8Array(values.flatMap((value) => (typeof value === 'number' ? [value] : [...value].map((c) => c.charCodeAt(0)))));
+  new Uint8Array(
+    values.flatMap((value) => (typeof value === 'number' ? [value] : [...value].map((c) => c.charCodeAt(0)))),
+  );
 
 describe('notTaken', () => {
   it('lets through JPEG, PNG, both orders of TIFF, BigTIFF and WebP', () => {

@@ -106,7 +106,12 @@ function isPassing(status: number): boolean {
 }
 
 function imageIdOf(url: string | null): string {
-  return url?.replace(/[?#].*$/, '').split('/').pop() ?? '';
+  return (
+    url
+      ?.replace(/[?#].*$/, '')
+      .split('/')
+      .pop() ?? ''
+  );
 }
 
 function toProblem(error: Error): ApiProblem {

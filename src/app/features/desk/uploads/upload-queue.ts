@@ -51,7 +51,10 @@ export class UploadQueue {
   });
 
   constructor() {
-    const retryHeldUp = () => this.failed().filter(isOffline).forEach(({ key }) => this.retry(key));
+    const retryHeldUp = () =>
+      this.failed()
+        .filter(isOffline)
+        .forEach(({ key }) => this.retry(key));
     const warn = (event: Event) => event.preventDefault();
     this.window?.addEventListener('online', retryHeldUp);
     effect(() => {
@@ -89,7 +92,9 @@ export class UploadQueue {
   }
 
   retryAll(): void {
-    this.failed().filter((upload) => this.canRetry(upload)).forEach(({ key }) => this.retry(key));
+    this.failed()
+      .filter((upload) => this.canRetry(upload))
+      .forEach(({ key }) => this.retry(key));
   }
 
   /** Takes a file out, and what of it was sent. */

@@ -67,7 +67,10 @@ describe('as last time', () => {
 
   it('is kept for one person alone', () => {
     const kept = new Map<string, string>();
-    const storage = { getItem: (key: string) => kept.get(key) ?? null, setItem: (key: string, value: string) => void kept.set(key, value) };
+    const storage = {
+      getItem: (key: string) => kept.get(key) ?? null,
+      setItem: (key: string, value: string) => void kept.set(key, value),
+    };
     new LastFindMemory(storage, 'maud').write(lastFindOf(FIND));
     expect(new LastFindMemory(storage, 'maud').read()).toEqual(lastFindOf(FIND));
     expect(new LastFindMemory(storage, 'imre').read()).toBeNull();

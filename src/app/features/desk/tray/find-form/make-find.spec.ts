@@ -7,7 +7,12 @@ import type { TrayPicture } from '@shared/contracts/images';
 import { MakeFind } from './make-find';
 
 const PICTURES = [
-  { id: 'one', capture: { local: '2025-11-03T10:42:00' }, exactPlace: { latitude: 54.1, longitude: -0.5 }, image: null },
+  {
+    id: 'one',
+    capture: { local: '2025-11-03T10:42:00' },
+    exactPlace: { latitude: 54.1, longitude: -0.5 },
+    image: null,
+  },
   { id: 'two', capture: { local: '2025-11-03T10:44:00' }, exactPlace: null, image: null },
 ] as unknown as TrayPicture[];
 

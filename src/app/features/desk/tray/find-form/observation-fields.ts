@@ -1,7 +1,13 @@
 import { TextFieldModule } from '@angular/cdk/text-field';
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { toObservable, toSignal } from '@angular/core/rxjs-interop';
-import { ReactiveFormsModule, Validators, type FormControl, type FormGroup, type NonNullableFormBuilder } from '@angular/forms';
+import {
+  ReactiveFormsModule,
+  Validators,
+  type FormControl,
+  type FormGroup,
+  type NonNullableFormBuilder,
+} from '@angular/forms';
 import { MatAutocompleteModule } from '@angular/material/autocomplete';
 import { MatButtonToggleModule } from '@angular/material/button-toggle';
 import { MatFormFieldModule } from '@angular/material/form-field';
@@ -20,7 +26,10 @@ export type ObservationGroup = FormGroup<{
 }>;
 
 /** Shaped like `NewObservation`, so that what the server says finds its field. */
-export function observationGroup(form: NonNullableFormBuilder, start: { day: string; kind: ObservationKind }): ObservationGroup {
+export function observationGroup(
+  form: NonNullableFormBuilder,
+  start: { day: string; kind: ObservationKind },
+): ObservationGroup {
   return form.group({
     kind: form.control<ObservationKind>(start.kind),
     observedOn: form.control(start.day, Validators.required),
@@ -32,7 +41,14 @@ export function observationGroup(form: NonNullableFormBuilder, start: { day: str
 /** One dated look: when, of which kind, on what. */
 @Component({
   selector: 'app-observation-fields',
-  imports: [ReactiveFormsModule, TextFieldModule, MatAutocompleteModule, MatButtonToggleModule, MatFormFieldModule, MatInputModule],
+  imports: [
+    ReactiveFormsModule,
+    TextFieldModule,
+    MatAutocompleteModule,
+    MatButtonToggleModule,
+    MatFormFieldModule,
+    MatInputModule,
+  ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './observation-fields.html',
   styleUrl: './fields.scss',

@@ -34,8 +34,16 @@ export function placeGroup(form: NonNullableFormBuilder, place: FromFiles['place
   const group: PlaceGroup = form.group({
     exact: form.group({
       words: form.control('', Validators.maxLength(200)),
-      latitude: new FormControl(place?.latitude ?? null, [Validators.min(-90), Validators.max(90), needsOther('longitude')]),
-      longitude: new FormControl(place?.longitude ?? null, [Validators.min(-180), Validators.max(180), needsOther('latitude')]),
+      latitude: new FormControl(place?.latitude ?? null, [
+        Validators.min(-90),
+        Validators.max(90),
+        needsOther('longitude'),
+      ]),
+      longitude: new FormControl(place?.longitude ?? null, [
+        Validators.min(-180),
+        Validators.max(180),
+        needsOther('latitude'),
+      ]),
       uncertaintyM: new FormControl<number | null>(null, Validators.min(1)),
     }),
     publicWords: form.control('', Validators.maxLength(120)),
@@ -71,7 +79,12 @@ export class PlaceFields {
   /** undefined before the first rendering */
   private readonly value = toSignal(
     toObservable(this.group).pipe(
-      switchMap((group) => group.valueChanges.pipe(startWith(null), map(() => group.getRawValue()))),
+      switchMap((group) =>
+        group.valueChanges.pipe(
+          startWith(null),
+          map(() => group.getRawValue()),
+        ),
+      ),
     ),
   );
   protected readonly sensitivity = computed(() => this.value()?.sensitivity ?? 'medium');
