@@ -1,5 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
 import { BenchStore } from './bench-store';
 import { ScaleEvidence } from './scale-evidence';
 import { groundsLine, scaleLine } from './scale-words';
@@ -9,7 +10,7 @@ import { ToolDesk } from './tool-desk';
 /** The scale on one line; *How sure is this?* one touch away, and setting it for the owner. */
 @Component({
   selector: 'app-scale-card',
-  imports: [MatButtonModule, ScaleEvidence, SetScale],
+  imports: [MatButtonModule, RouterLink, ScaleEvidence, SetScale],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
     <h2 i18n>Scale</h2>
@@ -39,6 +40,9 @@ import { ToolDesk } from './tool-desk';
         <app-set-scale (done)="close()" />
       } @else {
         <button type="button" class="link" (click)="setting.set(true)">{{ view() ? changeWords : setWords }}</button>
+        <a class="link" routerLink="/desk/rigs" [queryParams]="{ image: imageId() }" i18n
+          >Calibrate a setting with it…</a
+        >
       }
     }
   `,
@@ -51,6 +55,7 @@ export class ScaleCard {
   protected readonly changeWords = $localize`Change the scale…`;
   protected readonly setWords = $localize`Say what the scale is…`;
   protected readonly mayEdit = this.bench.mayEdit;
+  protected readonly imageId = computed(() => this.bench.image()?.id);
   protected readonly view = computed(() => this.bench.image()?.currentScale ?? null);
   protected readonly line = computed(() => {
     const scale = this.bench.scale();
