@@ -47,7 +47,7 @@ export function layFinger(solids: Solids, noise: Noise, finger: Finger, skin: nu
       const round = Math.sqrt(Math.max(0, 1 - Math.max(0, (v - 0.72) / 0.28) ** 2));
       const around = (u - 0.5) * 2 * NAIL.spread * (0.55 + 0.45 * round) * smooth(-0.12, 0.12, v);
       const edge = Math.abs(u * 2 - 1);
-      const r = 0.2 - 0.32 * edge ** 6 - 0.4 * smooth(0.9, 1, v) + 0.015 * Math.sin(u * 70);
+      const r = 0.2 - 0.32 * edge ** 6 - 0.4 * smooth(0.9, 1, v) + 0.004 * Math.sin(u * 70);
       return at(Math.max(along, 0.75), around, r + (along < 0.75 ? (0.75 - along) * -0.35 : 0));
     },
     nail,
@@ -79,8 +79,8 @@ export function skinRidges(noise: Noise, finger: Finger, u: number, v: number): 
   const across = (around - Math.sign(around) * Math.PI) * finger.width * 0.45;
   const pad = smooth(1.25, 1.75, Math.abs(around)) * smooth(21, 17, along);
   const whorl = Math.hypot(across * 0.9, (along - 9) * 0.8) + 0.7 * noise.at(across * 0.25, along * 0.25, 2.2);
-  const print = 0.035 * Math.sin((2 * Math.PI * whorl) / 0.48) * pad;
+  const print = 0.014 * Math.sin((2 * Math.PI * whorl) / 0.48) * pad;
   const x = around * finger.width * 0.5;
-  const lines = 0.022 * Math.abs(noise.fractal(x * 1.5, along * 3.4, 4.4, 3)) * (1 - pad);
-  return print - lines + 0.005 * noise.at(x * 9, along * 9, 1);
+  const lines = 0.06 * Math.abs(noise.fractal(x * 1.5, along * 3.4, 4.4, 3)) * (1 - pad);
+  return print - lines + 0.008 * noise.at(x * 9, along * 9, 1);
 }
