@@ -122,6 +122,11 @@ export class PictureGrid {
     this.focusCell(nextId);
   }
 
+  /** `10:42–10:58` */
+  protected timesOf({ from, to }: TrayGroup): string {
+    return from === to ? (from ?? '') : `${from}–${to}`;
+  }
+
   protected labelOf(picture: TrayPicture): string {
     const when = picture.capture?.local?.replace('T', ' ').slice(0, 16);
     return [picture.name, when].filter(Boolean).join(', ');
