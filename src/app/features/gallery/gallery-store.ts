@@ -33,6 +33,8 @@ export class GalleryStore {
   private readonly problemOfMore = signal<ApiProblem | null>(null);
 
   readonly tiles = computed<readonly GalleryTile[]>(() => this.pages().flatMap(({ page }) => page.tiles));
+  /** the cursor where it begins; null for the newest */
+  readonly from = computed(() => this.pages()[0]?.after ?? null);
   readonly total = computed(() => this.pages()[0]?.page.total ?? 0);
   readonly next = computed(() => this.pages().at(-1)?.page.next ?? null);
   readonly isLoadingMore = this.loadingMore.asReadonly();

@@ -1,7 +1,8 @@
+import { Location } from '@angular/common';
 import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import { TestBed } from '@angular/core/testing';
-import { provideRouter, Router, withComponentInputBinding } from '@angular/router';
+import { NavigationEnd, provideRouter, Router, withComponentInputBinding } from '@angular/router';
 import { RouterTestingHarness } from '@angular/router/testing';
 import type { GalleryPage, GalleryTile } from '@shared/contracts/gallery';
 import { Gallery } from './gallery';
@@ -125,6 +126,25 @@ describe('Gallery', () => {
     await harness.fixture.whenStable();
     expect(element().querySelector('app-hero')).toBeNull();
     expect(element().querySelector('.earlier a')?.getAttribute('href')).toBe('/');
+  });
+
+  it('stands as it was when one comes back from a find, also from far down', async () => {
+    TestBed.inject(Router).setUpLocationChangeListener();
+    await open('/');
+    await answer(page([tile(1), tile(2)], { total: 3, next: 'c1' }));
+    element().querySelector<HTMLElement>('.more a')?.click();
+    await answer(page([tile(3)], { total: 3 }));
+    const location = TestBed.inject(Location);
+    location.replaceState('/?after=c1', '', location.getState()); // what the wall does as one scrolls
+    await harness.navigateByUrl(`/finds/${id(103)}`);
+    const back = new Promise<void>((resolve) =>
+      TestBed.inject(Router).events.subscribe((e) => e instanceof NavigationEnd && resolve()),
+    );
+    location.back();
+    await back;
+    await harness.fixture.whenStable();
+    expect(element().querySelector('app-hero img')?.getAttribute('alt')).toBe('Picture 1');
+    expect(tiles()).toEqual(['Picture 2', 'Picture 3']);
   });
 
   it('asks again when the search changes', async () => {

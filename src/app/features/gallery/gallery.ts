@@ -64,8 +64,10 @@ export class Gallery {
     return this.first.error() ? 'problem' : 'loading';
   });
 
+  /** A wall that was kept may begin before the place that the address names. */
+  protected readonly fromNewest = computed(() => (this.held() ? this.store.from() : (this.after() ?? null)) === null);
   /** Only where the wall begins, and not over a search: there every picture counts the same. */
-  protected readonly hero = computed(() => (this.filtered() || this.after() ? null : heroOf(this.tiles())));
+  protected readonly hero = computed(() => (this.filtered() || !this.fromNewest() ? null : heroOf(this.tiles())));
   protected readonly wall = computed(() => this.tiles().filter((tile) => tile !== this.hero()));
 
   protected readonly isLoadingMore = this.store.isLoadingMore;
