@@ -86,9 +86,12 @@ export class BenchStore {
   });
   /** structures for the list, with the number of bodies in one's own series; those who only look see all */
   readonly structures = computed(() => {
-    const measured = this.series().map(({ structure }) => structure);
+    const measured = this.series()
+      .filter((series) => this.bodiesOf(series).length > 0)
+      .map(({ structure }) => structure);
     const shown = this.structure();
-    const ids = [...new Set([...COMMON_STRUCTURES, ...measured, ...(shown ? [shown] : [])])];
+    const common = this.mayMeasure() ? COMMON_STRUCTURES : [];
+    const ids = [...new Set([...common, ...measured, ...(shown ? [shown] : [])])];
     return ids.map((id) => ({ id, count: this.countOf(id) }));
   });
 
@@ -133,17 +136,18 @@ export class BenchStore {
     return this.series().find((series) => series.structure === structure && series.observer.id === own) ?? null;
   }
 
-  /** Opens the own series of a structure as last time, or finds it open. */
-  openSeries(structure: string): void {
-    const imageId = this.imageId();
-    if (imageId === undefined || this.ownSeries(structure)) return;
+  /** Opens the own series of a structure, with the choices of last time. What goes wrong stands in `trouble`. */
+  openSeries(structure: string): Observable<SeriesView> {
+    const imageId = this.imageId() as string;
     this.trouble.set(null);
-    this.api
-      .call(seriesRoutes.open, { params: { imageId }, body: { structure, ...this.lastTime.of(structure) } })
-      .subscribe({
-        next: (series) => this.seriesKept.update((all) => [...all.filter(({ id }) => id !== series.id), series]),
-        error: (error: unknown) => this.trouble.set(toApiProblem(error)),
-      });
+    const body = { structure, ...this.lastTime.of(structure) };
+    return this.api.call(seriesRoutes.open, { params: { imageId }, body }).pipe(
+      tap((series) => this.seriesKept.update((all) => [...all.filter(({ id }) => id !== series.id), series])),
+      catchError((error: unknown) => {
+        this.trouble.set(toApiProblem(error));
+        return EMPTY;
+      }),
+    );
   }
 
   editSeries(series: SeriesView, change: EditSeries): void {

@@ -1,6 +1,6 @@
 import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
-import { ChangeDetectionStrategy, Component, input, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, forwardRef, input, signal } from '@angular/core';
 import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { provideRouter } from '@angular/router';
 import type { ImageView } from '@shared/contracts/images';
@@ -16,7 +16,7 @@ const ME = { id: '01900000-0000-7000-8000-00000000000a', name: 'Imre' };
   selector: 'app-bench-picture',
   template: '',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  providers: [{ provide: BenchPicture, useExisting: NoPicture }],
+  providers: [{ provide: BenchPicture, useExisting: forwardRef(() => NoPicture) }],
 })
 class NoPicture {
   readonly image = input.required<ImageView>();

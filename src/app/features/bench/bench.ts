@@ -132,6 +132,7 @@ export class Bench {
       this.notes.loaded() &&
       this.bench.seriesLoaded() &&
       this.notes.kept() === 'kept' &&
+      !this.desk.opening() &&
       (this.picture()?.canvas().drawn() ?? false),
   );
 
@@ -167,7 +168,7 @@ export class Bench {
 
   protected async showKeys(): Promise<void> {
     const { KeyHelp } = await import('./key-help');
-    this.dialog.open(KeyHelp, { width: '560px' });
+    this.dialog.open(KeyHelp, { width: '560px', autoFocus: 'first-heading' });
   }
 
   /** The list opens the words of what is selected; a phone shows the list first. */

@@ -6,6 +6,7 @@ import { BenchStore } from './bench-store';
 
 type Edge = SeriesView['edgeRule'];
 type Ornament = 'in' | 'out' | 'unsaid';
+const ORNAMENTED: ReadonlySet<string> = new Set(['spore', 'thread']);
 
 /**
  * Where the edges of a series were taken. Asked once per series, beside a drawing; until then the series
@@ -32,6 +33,10 @@ export class EdgeQuestion {
     { ornament: 'in', words: $localize`with ornament` },
     { ornament: 'unsaid', words: $localize`not said` },
   ];
+  /** what grows on the wall is asked of what has a wall; elsewhere there is only the edge */
+  protected readonly mayHaveOrnament = computed(
+    () => ORNAMENTED.has(this.series().structure) || this.series().ornamentIncluded !== null,
+  );
   protected readonly mine = computed(() => this.series().mayMeasure);
   protected readonly ornament = computed<Ornament>(() => {
     const { ornamentIncluded } = this.series();
@@ -44,7 +49,7 @@ export class EdgeQuestion {
       this.ornament() === 'unsaid'
         ? $localize`ornament in or out not said`
         : this.ornaments.find((one) => one.ornament === this.ornament())?.words;
-    return `${edge}, ${ornament}`;
+    return this.mayHaveOrnament() ? `${edge}, ${ornament}` : edge;
   });
   /** open of itself while a spore's ornament was never spoken of; another series asks again */
   protected readonly open = linkedSignal<string, boolean>({

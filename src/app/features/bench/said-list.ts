@@ -39,6 +39,7 @@ export class SaidList {
   readonly worded = output<void>();
 
   protected readonly bin = mdiTrashCanOutline;
+  protected readonly withoutWords = $localize`without words`;
   protected readonly words = viewChild<ElementRef<HTMLTextAreaElement>>('words');
   protected readonly mayAnnotate = this.bench.mayAnnotate;
   protected readonly said = computed(() =>
@@ -70,7 +71,8 @@ export class SaidList {
     effect(() => {
       const wanted = this.desk.wantsWords();
       const field = this.words()?.nativeElement;
-      if (wanted === null || !field) return;
+      // the field of the note before may still stand when a new one wants words
+      if (wanted === null || field?.dataset['note'] !== wanted) return;
       field.focus();
       this.desk.wantsWords.set(null);
     });

@@ -39,7 +39,7 @@ import { ToolDesk } from './tool-desk';
       @if (setting()) {
         <app-set-scale (done)="close()" />
       } @else {
-        <button type="button" class="link" (click)="setting.set(true)">{{ view() ? changeWords : setWords }}</button>
+        <button type="button" class="link" (click)="set()">{{ view() ? changeWords : setWords }}</button>
         <a class="link" routerLink="/desk/rigs" [queryParams]="{ image: imageId() }" i18n
           >Calibrate a setting with it…</a
         >
@@ -67,6 +67,12 @@ export class ScaleCard {
   });
   protected readonly asked = signal(false);
   protected readonly setting = signal(false);
+
+  /** The panel takes the room of the evidence. */
+  protected set(): void {
+    this.asked.set(false);
+    this.setting.set(true);
+  }
 
   protected close(): void {
     this.setting.set(false);

@@ -2,8 +2,8 @@ import { ChangeDetectionStrategy, Component, computed, inject, input } from '@an
 import { seriesRoutes, type SeriesView } from '@shared/contracts/series';
 import { structureOf } from '@shared/annotations/structures';
 import { quantityText } from '@shared/scale/rounding';
-import type { Scale } from '@shared/scale/scale';
 import { decimalsFor } from '@shared/scale/decimals';
+import { MICROMETRES_PER, unitFor } from '@shared/units/length';
 import { pathOf } from '../../core/api';
 import { SessionStore } from '../../core/session-store';
 import { structureWords } from '../../core/structure-words';
@@ -58,35 +58,39 @@ export class SeriesCard {
 
   private line({ unit, grounds, dimensions }: SeriesFigures, { dimension, summary, values }: DimensionFigures) {
     const { mean, u, U, k, sd, n } = summary;
-    const inUm = unit === 'µm' && grounds !== 'none';
+    const scaled = unit === 'µm' && grounds !== 'none' ? grounds : null;
+    const shown = scaled ? unitFor(mean) : null;
+    const per = shown ? MICROMETRES_PER[shown] : 1;
     return {
       dimension,
+      unit: shown ?? 'px',
       title: dimensions.length > 1 ? dimensionWords(dimension) : null,
       label: `${this.name()}, ${dimensionWords(dimension)}`,
       // quantityText expands by 2: it is handed the u that comes out as k·u
-      mean: inUm ? quantityText(mean, (u * k) / 2, grounds as Scale['grounds']) : `${mean.toFixed(1)} px`,
-      sd:
-        sd === null
-          ? null
-          : inUm
-            ? `${sd.toFixed(Math.max(1, decimalsFor(Math.max(sd, 1e-9), 2)))} µm`
-            : `${sd.toFixed(1)} px`,
+      mean: scaled ? quantityText(mean, (u * k) / 2, scaled) : `${mean.toFixed(1)} px`,
+      sd: sd === null ? null : `${scaled ? spread(sd / per) : sd.toFixed(1)} ${shown ?? 'px'}`,
       n,
-      values,
-      plotted: inUm ? { value: mean, expanded: U } : null,
-      published: inUm ? this.published(dimension) : [],
+      values: values.map((value) => value / per),
+      plotted: scaled ? { value: mean / per, expanded: U / per } : null,
+      published: scaled ? this.published(dimension, per) : [],
     };
   }
 
-  private published(dimension: string): PublishedRange[] {
+  /** @param per µm in the unit that is shown */
+  private published(dimension: string, per: number): PublishedRange[] {
     const { structure } = this.series();
     return (this.bench.find()?.publishedSizes ?? [])
       .filter((size) => size.structure === structure && size.dimension === dimension)
       .map((size) => ({
         name: size.taxonName,
-        low: size.minUm,
-        high: size.maxUm,
+        low: size.minUm / per,
+        high: size.maxUm / per,
         source: [size.source, size.year].filter(Boolean).join(', '),
       }));
   }
+}
+
+/** A standard deviation to two digits. */
+function spread(sd: number): string {
+  return sd > 0 ? sd.toFixed(Math.max(0, decimalsFor(sd, 2))) : '0';
 }

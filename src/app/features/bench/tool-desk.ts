@@ -1,4 +1,5 @@
 import { computed, inject, Injectable, signal } from '@angular/core';
+import { finalize } from 'rxjs';
 import { v7 as newId } from 'uuid';
 import { structureOf } from '@shared/annotations/structures';
 import { px, type ImagePoint } from '@shared/geometry/points';
@@ -34,7 +35,11 @@ export class ToolDesk {
 
   private readonly inHand = signal<Activity | null>(null);
   private readonly running = signal<Running | null>(null);
+  private readonly isOpening = signal(false);
+  private waiting: { readonly structure: string; readonly edit: ToolEdit }[] = [];
   readonly activity = this.inHand.asReadonly();
+  /** a series is being opened for the first body of a structure */
+  readonly opening = this.isOpening.asReadonly();
   /** the line that says how large something is, while a scale is being set by it */
   readonly reference = signal<Segment | null>(null);
   /** where the keyboard draws; null while the mouse or a finger does */
@@ -56,9 +61,7 @@ export class ToolDesk {
   take(activity: Activity): void {
     this.inHand.set(activity);
     this.running.set(start(activity));
-    if (activity.does !== 'measure') return;
-    this.bench.structure.set(activity.structure);
-    this.bench.openSeries(activity.structure);
+    if (activity.does === 'measure') this.bench.structure.set(activity.structure);
   }
 
   putAway(): void {
@@ -98,32 +101,45 @@ export class ToolDesk {
     const running = this.running();
     if (!running) return;
     const { state, edit } = running.tool.step(running.state, input);
-    // an edit that has nowhere to go (its series is not open yet) is not lost: the tool waits where it was
-    if (edit && !this.keep(edit)) return;
     this.running.set({ ...running, state });
+    if (edit) this.keep(edit);
   }
 
-  /** @returns whether the edit could be kept */
-  private keep({ does, noteId, geometry }: ToolEdit): boolean {
+  private keep(edit: ToolEdit): void {
     const activity = this.inHand();
-    if (!activity) return false;
-    if (activity.does === 'reference') {
+    if (!activity) return;
+    const { does, noteId, geometry } = edit;
+    if (activity.does === 'measure') this.measure(activity.structure, edit);
+    else if (activity.does === 'reference') {
       if (geometry.type === 'line') this.reference.set({ a: geometry.a, b: geometry.b });
-      return true;
+    } else if (does === 'add') {
+      this.notes.add({ kind: activity.does, seriesId: null, geometry, text: '' }, noteId);
+      this.wantsWords.set(noteId);
     }
-    if (does === 'reshape') {
-      this.notes.reshape(noteId, geometry);
-      return true;
-    }
-    if (activity.does === 'measure') {
-      const series = this.bench.ownSeries(activity.structure);
-      if (!series) this.bench.openSeries(activity.structure);
-      else this.notes.add({ kind: 'measure', seriesId: series.id, geometry, text: '' }, noteId);
-      return series !== null;
-    }
-    this.notes.add({ kind: activity.does, seriesId: null, geometry, text: '' }, noteId);
-    this.wantsWords.set(noteId);
-    return true;
+  }
+
+  /**
+   * A series is opened by its first body and not by taking the tool up, so that looking around leaves none
+   * behind. Bodies drawn until it is open wait for it, in their order.
+   */
+  private measure(structure: string, edit: ToolEdit): void {
+    const series = this.bench.ownSeries(structure);
+    if (series && this.waiting.length === 0) this.draw(series.id, edit);
+    else this.waiting.push({ structure, edit });
+    if (this.waiting.length === 0 || this.isOpening()) return;
+    this.isOpening.set(true);
+    this.bench
+      .openSeries(structure)
+      .pipe(finalize(() => this.isOpening.set(false)))
+      .subscribe(({ id }) => {
+        for (const one of this.waiting.filter((body) => body.structure === structure)) this.draw(id, one.edit);
+        this.waiting = this.waiting.filter((body) => body.structure !== structure);
+      });
+  }
+
+  private draw(seriesId: string, { does, noteId, geometry }: ToolEdit): void {
+    if (does === 'add') this.notes.add({ kind: 'measure', seriesId, geometry, text: '' }, noteId);
+    else this.notes.reshape(noteId, geometry);
   }
 
   /** What is drawn lies on the picture, or within a label's reach beside it. */
