@@ -58,15 +58,6 @@ export class TaxonStore {
     return (taxon.acceptedId && this.byId().get(taxon.acceptedId)) || taxon;
   }
 
-  byIdOrNull(id: string): TaxonName | null {
-    return this.byId().get(id) ?? null;
-  }
-
-  /** Names that are new to the list are in it after the next load. */
-  forget(): void {
-    this.asked = null;
-  }
-
   remember(taxon: TaxonName): void {
     this.recentIds.update((ids) => [taxon.id, ...ids.filter((id) => id !== taxon.id)].slice(0, RECENT_KEPT));
     try {
