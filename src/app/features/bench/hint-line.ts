@@ -14,6 +14,9 @@ import type { Awaits } from './tools/tool';
     <p class="hint">
       @if (hint(); as hint) {
         <b>{{ hint.what }}</b> {{ hint.wants }}
+        @if (alone()) {
+          <span class="wide" i18n> Escape leaves the length alone.</span>
+        }
       } @else {
         <ng-container i18n>Drag to move, wheel or two fingers to zoom.</ng-container>
         @if (siblings()) {
@@ -73,6 +76,9 @@ import type { Awaits } from './tools/tool';
       cursor: pointer;
     }
     @media (max-width: 859px) {
+      :host {
+        min-height: 48px; /* two lines: a longer hint must not move the picture under the finger */
+      }
       .wide {
         display: none;
       }
@@ -98,6 +104,8 @@ export class HintLine {
     const scale = this.scale();
     return scale === null ? null : `${scale < 0.1 ? (scale * 100).toFixed(1) : Math.round(scale * 100)} %`;
   });
+  /** a body's length is drawn, and its width may be left out */
+  protected readonly alone = computed(() => this.desk.awaits() === 'across');
   protected readonly hint = computed(() => {
     const [activity, awaits] = [this.desk.activity(), this.desk.awaits()];
     if (!activity || !awaits) return null;
@@ -136,7 +144,7 @@ function measureHint(structure: string, awaits: Awaits): string {
     case 'end':
       return $localize`now its other end`;
     case 'across':
-      return $localize`now across it. Escape leaves the length alone`;
+      return $localize`now across it.`;
     case 'across-end':
       return $localize`now the other edge`;
     case 'next-point':
