@@ -37,12 +37,17 @@ export class OpenPicture {
   readonly drawn = this.isDrawn.asReadonly();
   readonly failed = this.hasFailed.asReadonly();
 
-  /** @param calm no gliding: for people who ask for less motion */
+  /**
+   * @param calm  no gliding: for people who ask for less motion
+   * @param nonce of the page's content security policy
+   */
   constructor(
     private readonly element: HTMLElement,
     private readonly source: PictureSource,
     calm: boolean,
+    nonce: string | null,
   ) {
+    forestallStyle(element.ownerDocument, nonce);
     this.viewer = new OpenSeadragon.Viewer({
       element,
       drawer: ['webgl', 'canvas'],
@@ -156,4 +161,17 @@ export class OpenPicture {
     this.current.set(viewport);
     this.frame.next(viewport);
   }
+}
+
+/**
+ * The viewer writes a style of its own into the page, which the content security policy refuses and reports.
+ * It doesn't where it finds one already: here it is, empty (our canvas has no focus of its own) and allowed.
+ */
+function forestallStyle(document: Document, nonce: string | null): void {
+  const mark = 'data-openseadragon-mobile-css';
+  if (document.querySelector(`style[${mark}]`)) return;
+  const style = document.createElement('style');
+  style.setAttribute(mark, 'true');
+  if (nonce) style.nonce = nonce;
+  document.head.append(style);
 }

@@ -1,6 +1,7 @@
 import {
   afterNextRender,
   ChangeDetectionStrategy,
+  CSP_NONCE,
   Component,
   computed,
   DestroyRef,
@@ -74,6 +75,7 @@ export class PictureCanvas {
   private readonly tiles = viewChild.required<ElementRef<HTMLElement>>('tiles');
   private readonly overlay = viewChild.required<ElementRef<HTMLCanvasElement>>('overlay');
 
+  private readonly nonce = inject(CSP_NONCE, { optional: true });
   private readonly ready = signal(false);
   private readonly picture = signal<OpenPicture | null>(null);
   readonly viewport = computed(() => this.picture()?.viewport() ?? null);
@@ -144,7 +146,7 @@ export class PictureCanvas {
     const element = this.tiles().nativeElement;
     element.replaceChildren();
     const calm = element.ownerDocument.defaultView?.matchMedia('(prefers-reduced-motion: reduce)').matches ?? false;
-    const picture = new OpenPicture(element, source, calm);
+    const picture = new OpenPicture(element, source, calm, this.nonce);
     picture.frames.subscribe((viewport) => this.paint(this.painter(), viewport));
     this.state = NO_GESTURE;
     this.picture.set(picture);
