@@ -26,6 +26,12 @@ export const SHORTEST_REFERENCE_PX = 10;
 /** Closer marks can't be two graduations, image px. */
 const CLOSEST_GRADUATIONS_PX = 1;
 
+/**
+ * Nobody marks a line better than this, however little the marks happen to scatter, image px: half a screen
+ * pixel at a four-fold view, rectangular. Common practice, no source.
+ */
+const LEAST_POINTING_PX = 1 / 8 / Math.sqrt(3);
+
 /** With fewer graduations their own scatter is no measure of pointing: see `fitUncertainty`. */
 const FEWEST_FOR_RESIDUALS = 5;
 
@@ -136,7 +142,7 @@ export function fitCalibration(input: {
  */
 function fitUncertainty(count: number, residualSdPx: number | null, pointingPx: number) {
   if (residualSdPx !== null && count >= FEWEST_FOR_RESIDUALS) {
-    return { px: residualSdPx, degreesOfFreedom: count - 2 };
+    return { px: Math.max(residualSdPx, LEAST_POINTING_PX), degreesOfFreedom: count - 2 };
   }
   return { px: Math.max(pointingPx, residualSdPx ?? 0), degreesOfFreedom: null };
 }

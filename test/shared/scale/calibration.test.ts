@@ -153,6 +153,15 @@ describe('calibration of many graduations', () => {
   });
 });
 
+describe('marks that happen not to scatter', () => {
+  it('claim no better than a person can point: ⅛ px, rectangular, on each mark', () => {
+    // six marks each 40 px: Σ(x − x̄)² = 17.5 · 40² px², so u(s)/s = 0.125/√3 / (40·√17.5)
+    const graduations = [0, 1, 2, 3, 4, 5].map((i) => ({ at: px(60 + 40 * i, 100), positionUm: 10 * i }));
+    const fit = fitCalibration({ graduations, toleranceUm: 0 });
+    expectClose(fit.standardUncertaintyFit / fit.umPerPx, 0.07216878 / (40 * Math.sqrt(17.5)), 1e-6);
+  });
+});
+
 describe('marks to graduations', () => {
   it('numbers consecutive marks along the ruling, whatever their order', () => {
     const marks = [px(30, 31), px(10, 11), px(40, 41), px(20, 21)];
