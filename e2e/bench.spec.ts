@@ -53,7 +53,7 @@ test('three spores: by mouse, by keyboard, and by touch', async ({ browser, base
     const picture = await PictureOnScreen.within(bench.surface);
     await picture.drag(...endsOf(first).along);
     await picture.drag(...endsOf(first).across);
-    await expect.poll(() => bench.measured()).toHaveLength(1);
+    await expect.poll(async () => sizesIn((await bench.measured())[0] ?? '')).toHaveLength(2);
     expectSizes((await bench.measured())[0] ?? '', first);
   });
 
@@ -75,7 +75,7 @@ test('three spores: by mouse, by keyboard, and by touch', async ({ browser, base
     await press('Space', 1);
     await press('ArrowDown', 26);
     await press('Enter', 1);
-    await expect.poll(() => bench.measured()).toHaveLength(2);
+    await expect.poll(async () => sizesIn((await bench.measured())[1] ?? '')).toHaveLength(2);
     expectSizes((await bench.measured())[1] ?? '', second);
     await page.keyboard.press('Escape');
   });
@@ -91,7 +91,7 @@ test('three spores: by mouse, by keyboard, and by touch', async ({ browser, base
       await send('touchMove', picture.at(to));
       await send('touchEnd');
     }
-    await expect.poll(() => bench.measured()).toHaveLength(3);
+    await expect.poll(async () => sizesIn((await bench.measured())[2] ?? '')).toHaveLength(2);
     expectSizes((await bench.measured())[2] ?? '', third);
 
     const [a, b] = [picture.at({ x: 100, y: 100 }), picture.at({ x: 200, y: 100 })];
@@ -205,6 +205,29 @@ function longestWhiteRun(pixels: Awaited<ReturnType<typeof pixelsOf>>, fromX: nu
   }
   return longest;
 }
+
+test('an end that was put wrong is dragged right, and nudged by the keyboard', async ({ page }) => {
+  const bench = await new BenchPage(page).open(await scaledPicture(page, 'mended.tif'));
+  await bench.take(/^Thread/);
+  const picture = await PictureOnScreen.within(bench.surface);
+  const length = async () => sizesIn((await bench.measured())[0] ?? '')[0] ?? 0;
+  await picture.drag({ x: 60, y: 160 }, { x: 230, y: 160 });
+  await expect.poll(length).toBeCloseTo(170 * TRUE_UM_PER_PX, 0);
+  await page.keyboard.press('Escape');
+  await picture.drag({ x: 230, y: 160 }, { x: 250, y: 160 });
+  await expect.poll(length).toBeCloseTo(190 * TRUE_UM_PER_PX, 0);
+  const dragged = await length();
+  for (let i = 0; i < 8; i++) await page.keyboard.press('ArrowLeft');
+  await expect.poll(async () => (await length()) - dragged).toBeCloseTo(-8 * TRUE_UM_PER_PX, 1);
+  await page.keyboard.press('Shift+ArrowRight');
+  await expect.poll(async () => (await length()) - dragged).toBeCloseTo(2 * TRUE_UM_PER_PX, 1);
+  // one key press is one edit: undone one by one
+  await page.keyboard.press('Control+z');
+  await expect.poll(async () => (await length()) - dragged).toBeCloseTo(-8 * TRUE_UM_PER_PX, 1);
+  await page.keyboard.press('Delete');
+  await expect.poll(async () => (await bench.measured()).length).toBe(0);
+  await bench.settled();
+});
 
 test('what could not be sent is kept in the browser, and goes out after a reload', async ({ page }) => {
   const bench = await new BenchPage(page).open(await scaledPicture(page, 'offline.tif'));

@@ -62,9 +62,11 @@ export class BenchPicture {
   private readonly hovered = signal<string | null>(null);
   private readonly live = signal<NoteGeometry | null>(null);
   protected readonly underFinger = signal<ViewPoint | null>(null);
+  /** a signal of its own: a note that changes its shape is still the same one */
+  private readonly selectedId = computed(() => this.notes.selected()?.id ?? null);
   /** the handle that arrows move; another note begins without */
   readonly handle = linkedSignal<string | null, number | null>({
-    source: () => this.notes.selected()?.id ?? null,
+    source: this.selectedId,
     computation: () => null,
   });
 

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, linkedSignal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, input, linkedSignal, untracked } from '@angular/core';
 import { FormsModule } from '@angular/forms';
 import { MatRadioModule } from '@angular/material/radio';
 import type { SeriesView } from '@shared/contracts/series';
@@ -51,10 +51,12 @@ export class EdgeQuestion {
         : this.ornaments.find((one) => one.ornament === this.ornament())?.words;
     return this.mayHaveOrnament() ? `${edge}, ${ornament}` : edge;
   });
+  private readonly seriesId = computed(() => this.series().id);
   /** open of itself while a spore's ornament was never spoken of; another series asks again */
   protected readonly open = linkedSignal<string, boolean>({
-    source: () => this.series().id,
-    computation: () => this.mine() && this.ornament() === 'unsaid' && this.series().structure === 'spore',
+    source: this.seriesId,
+    computation: () =>
+      untracked(() => this.mine() && this.ornament() === 'unsaid' && this.series().structure === 'spore'),
   });
   /** where the drawing's line stands: half the height of the drawing, from its middle */
   protected readonly reach = computed(() => {

@@ -187,11 +187,12 @@ export class PictureCanvas {
   private pointerDown(event: PointerEvent): void {
     if ((event.target as Element).closest('button')) return;
     if (event.button === 2) return;
+    // whoever takes the pointer, the keyboard goes where the hand is
+    this.focus();
     const plain = event.button === 0 && !this.panning();
     if (plain && this.state.name === 'idle' && this.leaves()(event)) return;
     event.stopPropagation();
     event.preventDefault(); // a middle click would start the browser's own scrolling
-    this.focus();
     try {
       this.surface().nativeElement.setPointerCapture(event.pointerId);
     } catch {
