@@ -1,4 +1,4 @@
-import type { Locator, Page } from '@playwright/test';
+import { expect, type Locator, type Page } from '@playwright/test';
 import sharp from 'sharp';
 import { FIDUCIALS } from '../../test/support/field-pictures.js';
 
@@ -6,6 +6,8 @@ interface Place {
   readonly x: number;
   readonly y: number;
 }
+
+const distance = (a: Place, b: Place): number => Math.hypot(a.x - b.x, a.y - b.y);
 
 /**
  * Where image pixels lie on the screen, found by the picture's own magenta discs in a screenshot and not by
@@ -27,6 +29,18 @@ export class PictureOnScreen {
     if (zoom.x < 3.9)
       throw new Error(`Only ${zoom.x.toFixed(2)} screen pixels per image pixel: too coarse to click by.`);
     return new PictureOnScreen(surface.page(), zoom, { x: box.x + origin.x, y: box.y + origin.y });
+  }
+
+  /** The same once the view has come to rest: two readings, a moment apart, that agree. */
+  static async atRest(surface: Locator): Promise<PictureOnScreen> {
+    let last: PictureOnScreen | null = null;
+    await expect(async () => {
+      const seen = await PictureOnScreen.within(surface);
+      const agrees = last !== null && distance(seen.at({ x: 0, y: 0 }), last.at({ x: 0, y: 0 })) < 0.1;
+      last = seen;
+      expect(agrees && Math.abs(seen.zoom.x - last.zoom.x) < 0.001).toBe(true);
+    }).toPass({ timeout: 20_000, intervals: [250] });
+    return last as unknown as PictureOnScreen;
   }
 
   /** Screen (CSS) pixels of a place in the picture. */
