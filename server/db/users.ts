@@ -49,6 +49,11 @@ export class UserTable {
     return (await this.db.read<Row>('users').orderBy('name')).map(toUser);
   }
 
+  /** those of these addresses (lower case) that somebody here has */
+  async emailsAmong(emails: readonly string[]): Promise<ReadonlySet<string>> {
+    return new Set((await this.db.read<Row>('users').whereIn('email', emails).pluck('email')) as string[]);
+  }
+
   async isEmpty(): Promise<boolean> {
     return (await this.db.read<Row>('users').select('id').first()) === undefined;
   }

@@ -14,7 +14,7 @@ export class PeopleService {
 
   async session(userId: string | null): Promise<Session> {
     const user = userId === null ? null : await this.users.find(userId);
-    return { user: user && toMe(user), demo: this.demo ? [...DEMO_PEOPLE] : [] };
+    return { user: user && toMe(user), demo: this.demo ? await this.demoPeople() : [] };
   }
 
   async saveProfile(userId: string, profile: Profile): Promise<Me> {
@@ -27,6 +27,12 @@ export class PeopleService {
     const day = today(this.clock);
     if (user.lastSeenAt !== null && user.lastSeenAt.slice(0, 10) >= day) return;
     await this.users.seen(user.id, instant(this.clock), day);
+  }
+
+  /** The demo is on by default, also over a data folder that people of its own have filled: it has none of these. */
+  private async demoPeople(): Promise<Session['demo']> {
+    const here = await this.users.emailsAmong(DEMO_PEOPLE.map(({ email }) => email));
+    return DEMO_PEOPLE.filter(({ email }) => here.has(email));
   }
 
   private async me(userId: string): Promise<Me> {

@@ -1,4 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { UserTable } from '../../../server/db/users.js';
+import { DEMO_PEOPLE } from '../../../server/demo.js';
+import { newId } from '../../../server/ids.js';
 import { PASSWORD, TestApp } from '../../support/app.js';
 
 describe('the session', () => {
@@ -23,6 +26,30 @@ describe('the session', () => {
     const unknown = await browser.post('/api/session', { email: 'nobody@people.example', password: PASSWORD });
     expect([wrong.status, unknown.status]).toEqual([401, 401]);
     expect((wrong.body as { type: string }).type).toBe((unknown.body as { type: string }).type);
+  });
+
+  it('offers the sign-ins of the demo’s people only where they are, and only while the demo is on', async () => {
+    const [imre] = DEMO_PEOPLE;
+    if (!imre) throw new Error('The demo has nobody.');
+    for (const { DEMO, offered } of [
+      { DEMO: 'on', offered: [imre] },
+      { DEMO: 'off', offered: [] },
+    ]) {
+      const other = await TestApp.open({ DEMO });
+      try {
+        await other.addPerson('keeper');
+        const demo = async () => ((await (await other.visit()).get('/api/session')).body as { demo: unknown }).demo;
+        expect(await demo()).toEqual([]);
+        await new UserTable(other.db).insert({
+          ...{ id: newId(), name: imre.name, role: imre.role, email: imre.email, portrait: null, fingertipMm: null },
+          ...{ creditLine: imre.name, defaultLicence: 'by', createdAt: other.clock.now().toISOString() },
+          passwordHash: 'never asked for here',
+        });
+        expect(await demo()).toEqual(offered);
+      } finally {
+        await other.close();
+      }
+    }
   });
 
   it('refuses a change that carries no XSRF token', async () => {
