@@ -10,6 +10,7 @@ interface Row extends TileColumns {
   title: string;
   light: string;
   credit_line: string;
+  licence: GalleryTile['licence'];
   find_id: string;
   prefix: string;
   number: number;
@@ -44,6 +45,7 @@ export class GalleryTable {
         'images.title',
         'images.light',
         'images.credit_line',
+        'images.licence',
         'finds.prefix',
         'finds.number',
         'finds.public_words',
@@ -75,6 +77,7 @@ function toGalleryTile(row: Row): GalleryTile {
     name: toName(row),
     publicPlace: row.public_words,
     creditLine: row.credit_line,
+    licence: row.licence,
   };
 }
 

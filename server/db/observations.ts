@@ -32,6 +32,7 @@ interface PictureRow extends TileColumns {
   role: FindPicture['role'];
   light: FindPicture['light'];
   credit_line: string;
+  licence: FindPicture['licence'];
 }
 
 /** Looks at a find, what was prepared in them, and the pictures taken. */
@@ -159,6 +160,7 @@ export class ObservationTable {
         'images.role',
         'images.light',
         'images.credit_line',
+        'images.licence',
       );
     return (await (withTiles(query) as Knex.QueryBuilder)) as PictureRow[];
   }
@@ -183,5 +185,6 @@ function toPicture(row: PictureRow): FindPicture {
     light: row.light,
     preparationId: row.preparation_id,
     creditLine: row.credit_line,
+    licence: row.licence,
   };
 }

@@ -1,6 +1,6 @@
 import * as z from 'zod/mini';
 import { SENSITIVITIES } from '../place/generalise.js';
-import { Day, Id, line, NameView, PersonRef, prose, Visibility } from './common.js';
+import { Day, Id, Licence, line, NameView, PersonRef, prose, Visibility } from './common.js';
 import { ImageRole, ImageTile, Light } from './images.js';
 import { defineRoutes } from './route.js';
 import { SeriesView } from './series.js';
@@ -97,6 +97,7 @@ export const FindPicture = z.strictObject({
   light: Light,
   preparationId: z.nullable(Id),
   creditLine: z.string(),
+  licence: Licence,
 });
 export type FindPicture = z.infer<typeof FindPicture>;
 

@@ -1,5 +1,5 @@
 import * as z from 'zod/mini';
-import { Id, NameView } from './common.js';
+import { Id, Licence, NameView } from './common.js';
 import { ImageTile } from './images.js';
 import { defineRoutes } from './route.js';
 
@@ -13,6 +13,7 @@ export const GalleryTile = z.strictObject({
   name: z.nullable(NameView),
   publicPlace: z.string(),
   creditLine: z.string(),
+  licence: Licence,
 });
 export type GalleryTile = z.infer<typeof GalleryTile>;
 

@@ -115,6 +115,15 @@ describe('a find', () => {
     await other.patch(`/api/finds/${find.id}`, { fruitBodies: 9 }).expect(403);
   });
 
+  it('says of each picture whom to credit and under which licence, also to visitors', async () => {
+    const imageId = await addPicture(server, { ownerId: finder.id });
+    const find = await makeFind(browser, [imageId]);
+    const said = { creditLine: 'I. Waddell, Calder Wick', licence: 'by-nc-sa' };
+    await browser.patch(`/api/images/${imageId}`, said).expect(200);
+    const seen = (await (await server.visit()).get(`/api/finds/${find.id}`).expect(200)).body as FindView;
+    expect(seen.observations[0]?.pictures).toMatchObject([{ id: imageId, ...said }]);
+  });
+
   it('gains observations and preparations, and tells their pictures apart', async () => {
     const [field, slide] = [
       await addPicture(server, { ownerId: finder.id }),

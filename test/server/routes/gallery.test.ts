@@ -174,6 +174,7 @@ describe('the gallery', () => {
   it('tells each tile its name, find and place', async () => {
     const species = await addTaxon(browser, 'Trichia varia');
     const { findId, imageId } = await show();
+    await browser.patch(`/api/images/${imageId}`, { licence: 'by-nc' }).expect(200);
     await determine(browser, findId, species.id, 'cf.');
     expect((await page()).tiles).toMatchObject([
       {
@@ -183,6 +184,8 @@ describe('the gallery', () => {
         taxonId: species.id,
         name: { name: 'Trichia varia', qualifier: 'cf.' },
         publicPlace: 'a tram depot',
+        creditLine: 'Somebody',
+        licence: 'by-nc',
         scale: null,
       },
     ]);

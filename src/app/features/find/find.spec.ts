@@ -43,6 +43,7 @@ const picture = (n: number, change: Partial<FindPicture>): FindPicture => ({
   light: 'flash',
   preparationId: null,
   creditLine: 'Imre Waddell',
+  licence: 'by-sa',
   ...change,
 });
 const stands = determination(42, { stands: true });

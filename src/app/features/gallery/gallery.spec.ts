@@ -25,6 +25,7 @@ const tile = (n: number, change: Partial<GalleryTile> = {}): GalleryTile => ({
   name: null,
   publicPlace: 'depot',
   creditLine: 'Imre Waddell',
+  licence: 'by-sa',
   ...change,
 });
 const page = (tiles: GalleryTile[], change: Partial<GalleryPage> = {}): GalleryPage => ({
