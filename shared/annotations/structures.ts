@@ -49,7 +49,5 @@ export const OTHER_PREFIX = 'other:';
 export function structureOf(id: string): Structure | null {
   const known = STRUCTURES.find((structure) => structure.id === id);
   if (known) return known;
-  return id.startsWith(OTHER_PREFIX) && id.trim().length > OTHER_PREFIX.length
-    ? { id, way: 'along', wanted: 5 }
-    : null;
+  return id.startsWith(OTHER_PREFIX) && id.trim().length > OTHER_PREFIX.length ? { id, way: 'along', wanted: 5 } : null;
 }

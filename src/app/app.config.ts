@@ -5,7 +5,6 @@ import {
   provideBrowserGlobalErrorListeners,
   type ApplicationConfig,
 } from '@angular/core';
-import { MAT_FORM_FIELD_DEFAULT_OPTIONS, type MatFormFieldDefaultOptions } from '@angular/material/form-field';
 import { provideClientHydration, withI18nSupport } from '@angular/platform-browser';
 import {
   provideRouter,
@@ -35,10 +34,6 @@ export const appConfig: ApplicationConfig = {
     // No event replay: it needs an inline script, which the content security policy refuses.
     provideClientHydration(withI18nSupport()),
     provideAppInitializer(() => inject(SessionStore).restore()),
-    {
-      provide: MAT_FORM_FIELD_DEFAULT_OPTIONS,
-      useValue: { appearance: 'outline' } satisfies MatFormFieldDefaultOptions,
-    },
     { provide: TitleStrategy, useClass: PageTitleStrategy },
   ],
 };
