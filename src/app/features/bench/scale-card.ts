@@ -40,9 +40,11 @@ import { ToolDesk } from './tool-desk';
         <app-set-scale (done)="close()" />
       } @else {
         <button type="button" class="link" (click)="set()">{{ view() ? changeWords : setWords }}</button>
-        <a class="link" routerLink="/desk/rigs" [queryParams]="{ image: imageId() }" i18n
-          >Calibrate a setting with it…</a
-        >
+        @if (isReference()) {
+          <a class="link" routerLink="/desk/rigs" [queryParams]="{ image: imageId() }" i18n
+            >Calibrate a setting with it…</a
+          >
+        }
       }
     }
   `,
@@ -56,6 +58,7 @@ export class ScaleCard {
   protected readonly setWords = $localize`Say what the scale is…`;
   protected readonly mayEdit = this.bench.mayEdit;
   protected readonly imageId = computed(() => this.bench.image()?.id);
+  protected readonly isReference = computed(() => this.bench.image()?.role === 'reference');
   protected readonly isReference = computed(() => this.bench.image()?.role === 'reference');
   protected readonly view = computed(() => this.bench.image()?.currentScale ?? null);
   protected readonly line = computed(() => {
