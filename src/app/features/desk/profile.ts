@@ -10,12 +10,12 @@ import { LICENCES } from '@shared/contracts/common';
 import { sessionRoutes, type Me } from '@shared/contracts/session';
 import { Api } from '../../core/api';
 import { toApiProblem, type ApiProblem } from '../../core/api-problem';
+import { LICENCE_WORDS } from '../../core/licence-words';
 import { SessionStore } from '../../core/session-store';
 import { controlWords } from '../../ui/forms/control-words';
 import { focusFirstInvalid, showFieldProblems } from '../../ui/forms/field-problems';
 import { ProblemBox } from '../../ui/problem/problem';
 import { Rule } from '../../ui/rule/rule';
-import { LICENCE_WORDS } from './licence-words';
 import { ACCEPT } from './uploads/picture-files';
 
 @Component({

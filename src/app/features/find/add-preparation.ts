@@ -22,6 +22,8 @@ export class AddPreparation {
 
   readonly findId = input.required<string>();
   readonly observation = input.required<ObservationView>();
+  /** what the find's pictures are called, by their ids */
+  readonly names = input.required<ReadonlyMap<string, string>>();
   readonly added = output<FindView>();
   readonly givenUp = output<void>();
 
@@ -29,10 +31,7 @@ export class AddPreparation {
   protected readonly pictures = computed(() =>
     this.observation()
       .pictures.filter((picture) => picture.preparationId === null)
-      .map((picture, i) => ({
-        id: picture.id,
-        words: picture.title || picture.altText || $localize`Picture ${i + 1}`,
-      })),
+      .map(({ id }) => ({ id, words: this.names().get(id) ?? '' })),
   );
   protected readonly submission = new Submission();
   protected readonly form = inject(NonNullableFormBuilder).group({

@@ -1,11 +1,11 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { MatMenuModule } from '@angular/material/menu';
 import { mdiTrayArrowDown } from '@mdi/js';
 import { licenceUri } from '@shared/contracts/common';
 import type { FindPicture } from '@shared/contracts/finds';
-import { imageRoutes, PICTURE_FORMATS, type ImageView } from '@shared/contracts/images';
-import { Api, pathOf } from '../../core/api';
+import { imageRoutes, PICTURE_FORMATS } from '@shared/contracts/images';
+import { pathOf } from '../../core/api';
 import { licenceWords } from '../../core/licence-words';
 import { Icon } from '../../ui/icon/icon';
 
@@ -20,16 +20,14 @@ const WIDTHS = [800, 1600] as const;
   styleUrl: './carry-away.scss',
 })
 export class CarryAway {
-  private readonly api = inject(Api);
   protected readonly icon = mdiTrayArrowDown;
 
   readonly picture = input.required<FindPicture>();
+  /** what the picture is called */
+  readonly name = input.required<string>();
   readonly mayEdit = input(false);
 
-  protected readonly label = computed(() => {
-    const { title, altText } = this.picture();
-    return $localize`Carry away a copy of ${title || altText}:picture:`;
-  });
+  protected readonly label = computed(() => $localize`Carry away a copy of ${this.name()}:picture:`);
   protected readonly barred = computed(() => (this.picture().scale?.grounds ?? 'none') !== 'none');
   protected readonly original = computed(() => pathOf(imageRoutes.original, this.at()));
   protected readonly copies = computed(() => {
@@ -40,19 +38,10 @@ export class CarryAway {
     ]);
   });
 
-  private readonly image = signal<ImageView | null>(null);
   protected readonly terms = computed(() => {
-    const image = this.image();
-    return image && { credit: image.creditLine, words: licenceWords(image.licence), uri: licenceUri(image.licence) };
+    const { creditLine, licence } = this.picture();
+    return { credit: creditLine, words: licenceWords(licence), uri: licenceUri(licence) };
   });
-
-  protected fetchTerms(): void {
-    if (this.image()) return;
-    this.api.call(imageRoutes.read, this.at()).subscribe({
-      next: (image) => this.image.set(image),
-      error: () => undefined, // the credit stands beside the picture; without its licence nothing may be assumed
-    });
-  }
 
   private copy(format: (typeof PICTURE_FORMATS)[number], width: number | null) {
     const query = new URLSearchParams({

@@ -1,6 +1,6 @@
 import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
-import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { ApplicationRef, ChangeDetectionStrategy, Component } from '@angular/core';
 import { DeferBlockBehavior, TestBed } from '@angular/core/testing';
 import { provideRouter, withComponentInputBinding } from '@angular/router';
 import { RouterTestingHarness } from '@angular/router/testing';
@@ -141,6 +141,66 @@ describe('Find', () => {
     expect(headings).toEqual(['Slide 2', 'Scale references']);
     const bench = Array.from(element().querySelectorAll('app-find-picture-card > a'), (a) => a.getAttribute('href'));
     expect(bench).toEqual([21, 22, 23].map((n) => `/images/${id(n)}`));
+  });
+
+  it('names every link and button, also of pictures that nobody has titled or described', async () => {
+    const silent = picture(24, { altText: '', title: '' });
+    const [observation] = find().observations;
+    const view = find({
+      observations: [{ ...(observation as FindView['observations'][number]), pictures: [picture(21, {}), silent] }],
+      may: { edit: true, determine: true, decide: true },
+    });
+    await show(view);
+    const card = element().querySelectorAll('app-find-picture-card')[1];
+    expect(card?.querySelector('img')?.getAttribute('alt')).toBe('Picture 2 of CW-214');
+    const labels = Array.from(card?.querySelectorAll('button') ?? [], (button) => button.getAttribute('aria-label'));
+    expect(labels).toEqual(['Details of Picture 2 of CW-214', 'Carry away a copy of Picture 2 of CW-214']);
+    for (const control of Array.from(element().querySelectorAll('a, button'))) {
+      const alt = Array.from(control.querySelectorAll('img'), (img) => img.alt).join(' ');
+      const name = (control.getAttribute('aria-label') ?? `${control.textContent} ${alt}`).trim();
+      expect(name, control.outerHTML).not.toBe('');
+      expect(name).not.toMatch(/\bof$|undefined|null|\{\{/);
+    }
+  });
+
+  it('says of each picture whom to credit and under which licence, without asking for it', async () => {
+    await show(find());
+    expect(text('.caption > .words')).toBe('flash Imre Waddell, CC BY-SA 4.0');
+    expect(element().querySelector('app-find-picture-card a[rel~=license]')?.getAttribute('href')).toBe(
+      'http://creativecommons.org/licenses/by-sa/4.0/',
+    );
+    element().querySelector<HTMLElement>('app-carry-away button')?.click();
+    await harness.fixture.whenStable();
+    const menu = document.querySelector('.mat-mdc-menu-panel');
+    expect(menu?.textContent).toContain('Imre Waddell, CC BY-SA 4.0');
+    expect(menu?.querySelector('a[rel~=license]')?.textContent).toContain('What the licence allows');
+  });
+
+  it('lets the finder say what a picture shows, and shows it at once', async () => {
+    await show(find({ may: { edit: true, determine: true, decide: true } }));
+    element().querySelector<HTMLElement>('.caption > .words button')?.click();
+    const sheet = await vi.waitUntil(() => document.querySelector<HTMLElement>('app-picture-details'));
+    await TestBed.inject(ApplicationRef).whenStable(); // the form is bound to its fields
+    const title = sheet.querySelector<HTMLInputElement>('input[formControlName=title]') as HTMLInputElement;
+    title.value = 'Spores in water';
+    title.dispatchEvent(new Event('input'));
+    sheet.querySelector('form')?.dispatchEvent(new Event('submit'));
+    const request = http.expectOne({ method: 'PATCH', url: `/api/images/${id(21)}` });
+    expect(request.request.body).toEqual({
+      title: 'Spores in water',
+      altText: 'Picture 21',
+      light: 'flash',
+      role: 'subject',
+      preparationId: null,
+      licence: 'by-sa',
+      creditLine: 'Imre Waddell',
+    });
+    // what the page takes of an answer that holds more
+    request.flush({ ...picture(21, { title: 'Spores in water', light: 'bright field' }), preparation: { id: id(31) } });
+    await vi.waitUntil(() => text('.caption > .words')?.startsWith('Spores in water, bright field'));
+    expect(document.querySelector('app-picture-details')).toBeNull();
+    expect(text('app-observation h3')).toBe('Slide 2');
+    expect(element().querySelectorAll('h3 ~ app-justified app-find-picture-card')).toHaveLength(3);
   });
 
   it('tells the whole history of names, the standing one first, with reasons', async () => {

@@ -11,6 +11,7 @@ import {
 import { MatButtonModule } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import { findRoutes, type FindView } from '@shared/contracts/finds';
+import type { ImageView } from '@shared/contracts/images';
 import { Api } from '../../core/api';
 import { toApiProblem } from '../../core/api-problem';
 import { nameWords } from '../../core/name-words';
@@ -23,6 +24,7 @@ import { TaxonName } from '../../ui/taxon-name/taxon-name';
 import { AddObservation } from './add-observation';
 import { DeterminationPanel } from './determination-panel';
 import { Observation } from './observation';
+import { pictureNames, withPicture } from './pictures-of-find';
 import { PlacePanel } from './place-panel';
 import { SeriesPanel } from './series-panel';
 import { VisibilityPanel } from './visibility-panel';
@@ -56,6 +58,10 @@ export class Find {
   protected readonly find = computed(() => (this.answer.hasValue() ? this.answer.value() : null));
   protected readonly missing = computed(() => toApiProblem(this.answer.error()).code === 'not-found');
   protected readonly adding = signal(false);
+  protected readonly names = computed(() => {
+    const find = this.find();
+    return find ? pictureNames(find) : new Map<string, string>();
+  });
 
   protected readonly subtitle = computed(() => {
     const find = this.find();
@@ -81,6 +87,12 @@ export class Find {
   protected take(find: FindView): void {
     this.answer.set(find);
     this.adding.set(false);
+  }
+
+  /** Describing a picture answers with the picture alone. */
+  protected takePicture(image: ImageView): void {
+    const find = this.find();
+    if (find) this.answer.set(withPicture(find, image));
   }
 
   private titleOf(find: FindView): string {

@@ -1,6 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input, output, signal } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import type { FindPicture, FindView, ObservationView } from '@shared/contracts/finds';
+import type { ImageView } from '@shared/contracts/images';
 import { dayWords } from '../../core/day-words';
 import { Each, Justified, type RowAspects } from '../../ui/justified/justified';
 import { AddPreparation } from './add-preparation';
@@ -19,8 +20,12 @@ export class Observation {
   readonly observation = input.required<ObservationView>();
   readonly findId = input.required<string>();
   readonly finderId = input.required<string>();
+  /** what its pictures are called, by their ids */
+  readonly names = input.required<ReadonlyMap<string, string>>();
   readonly mayEdit = input(false);
   readonly changed = output<FindView>();
+  /** one of its pictures was described anew */
+  readonly described = output<ImageView>();
 
   protected readonly adding = signal(false);
   /** In narrower rooms than the gallery's; a picture that is alone is shown larger. */

@@ -28,6 +28,16 @@ const tile = (n: number, change: Partial<GalleryTile> = {}): GalleryTile => ({
   licence: 'by-sa',
   ...change,
 });
+const named: Partial<GalleryTile> = {
+  title: 'Heads on bark',
+  name: {
+    name: 'Hemitrichia clavata',
+    authorship: '(Pers.) Rostaf.',
+    rank: 'species',
+    code: 'botanical',
+    qualifier: '',
+  },
+};
 const page = (tiles: GalleryTile[], change: Partial<GalleryPage> = {}): GalleryPage => ({
   tiles,
   total: tiles.length,
@@ -70,17 +80,35 @@ describe('Gallery', () => {
     await harness.fixture.whenStable();
   }
 
-  it('hangs the newest landscape picture with a scale large, and the others on the wall', async () => {
+  it('lets the newest picture that is fit for it lead, with credit and licence, and hangs the others on the wall', async () => {
     await open('/');
-    await answer(page([tile(1, { scale: null }), tile(2, { width: 800 }), tile(3), tile(4)]));
-    expect(element().querySelector('app-hero img')?.getAttribute('alt')).toBe('Picture 3');
-    expect(tiles()).toEqual(['Picture 1', 'Picture 2', 'Picture 4']);
+    await answer(page([tile(1), tile(2, named), tile(3, named)]));
+    expect(element().querySelector('app-hero img')?.getAttribute('alt')).toBe('Picture 2');
+    expect(element().querySelector('app-hero .credit')?.textContent).toMatch(/Imre Waddell,\s+CC BY-SA 4\.0/);
+    expect(element().querySelector('app-hero a[rel~=license]')?.getAttribute('href')).toBe(
+      'http://creativecommons.org/licenses/by-sa/4.0/',
+    );
+    expect(tiles()).toEqual(['Picture 1', 'Picture 3']);
+  });
+
+  it('is led by nothing where no picture is fit for it', async () => {
+    await open('/');
+    await answer(page([tile(1)]));
+    expect(element().querySelector('app-hero')).toBeNull();
+    expect(tiles()).toEqual(['Picture 1']);
+  });
+
+  it('names a picture that nobody has described after its taxon and find, its title before that', async () => {
+    await open('/?q=depot');
+    const silent = { altText: '', title: '' };
+    await answer(page([tile(1, silent), tile(2, { ...named, ...silent }), tile(3, { ...named, altText: '' })]));
+    expect(tiles()).toEqual(['Not yet named, CW-1', 'Hemitrichia clavata, CW-2', 'Heads on bark']);
   });
 
   it('leads from a picture to its find', async () => {
     await open('/');
     await answer(page([tile(1), tile(2)]));
-    expect(element().querySelector('app-wall a')?.getAttribute('href')).toBe(`/finds/${id(102)}`);
+    expect(element().querySelector('app-wall a')?.getAttribute('href')).toBe(`/finds/${id(101)}`);
   });
 
   it('asks for what the address says, shows it as chips, and takes each off by itself', async () => {
@@ -132,7 +160,7 @@ describe('Gallery', () => {
   it('stands as it was when one comes back from a find, also from far down', async () => {
     TestBed.inject(Router).setUpLocationChangeListener();
     await open('/');
-    await answer(page([tile(1), tile(2)], { total: 3, next: 'c1' }));
+    await answer(page([tile(1, named), tile(2)], { total: 3, next: 'c1' }));
     element().querySelector<HTMLElement>('.more a')?.click();
     await answer(page([tile(3)], { total: 3 }));
     const location = TestBed.inject(Location);
@@ -172,7 +200,7 @@ describe('Gallery', () => {
     element().querySelector<HTMLElement>('app-problem button')?.click();
     TestBed.tick();
     await answer(page([tile(1), tile(2)]));
-    expect(tiles()).toEqual(['Picture 2']);
+    expect(tiles()).toEqual(['Picture 1', 'Picture 2']);
   });
 
   it('shows empty mounts while the pictures are on their way', async () => {

@@ -16,6 +16,7 @@ import { TaxonName } from '../../ui/taxon-name/taxon-name';
 import { FilterLine } from './filter-line';
 import { GalleryStore, type GalleryFilter } from './gallery-store';
 import { Hero } from './hero';
+import { heroOf } from './hero-of';
 import { Wall } from './wall';
 import { WallSkeleton } from './wall-skeleton';
 
@@ -107,10 +108,4 @@ export class Gallery {
       });
     });
   }
-}
-
-/** The newest landscape picture with a scale; without one, the newest. */
-function heroOf(tiles: readonly GalleryTile[]): GalleryTile | null {
-  const good = tiles.find((tile) => tile.width / tile.height >= 1.2 && tile.scale && tile.scale.grounds !== 'none');
-  return good ?? tiles[0] ?? null;
 }

@@ -3,14 +3,15 @@ import { MatButtonModule } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { GalleryTile } from '@shared/contracts/gallery';
 import { lightWords } from '../../core/light-words';
+import { LicenceLink } from '../../ui/licence/licence';
 import { Picture } from '../../ui/picture/picture';
 import { Rule } from '../../ui/rule/rule';
 import { TaxonName } from '../../ui/taxon-name/taxon-name';
 
-/** The newest good picture, as a museum hangs what it has just got. */
+/** The picture that leads, as a museum hangs what it has just got. */
 @Component({
   selector: 'app-hero',
-  imports: [MatButtonModule, RouterLink, Picture, Rule, TaxonName],
+  imports: [MatButtonModule, RouterLink, LicenceLink, Picture, Rule, TaxonName],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
     <section i18n-aria-label aria-label="New on the wall">
@@ -24,7 +25,10 @@ import { TaxonName } from '../../ui/taxon-name/taxon-name';
         <p class="about soft">{{ light() }} · {{ tile().publicPlace }} · {{ tile().findNumber }}</p>
         <app-rule />
         <a mat-flat-button [routerLink]="['/finds', tile().findId]" i18n>Open the find</a>
-        <p class="credit soft" i18n>Picture: {{ tile().creditLine }}</p>
+        <p class="credit soft">
+          <ng-container i18n>Picture: {{ tile().creditLine }}</ng-container
+          >, <app-licence [licence]="tile().licence" />
+        </p>
       </div>
     </section>
   `,

@@ -21,7 +21,7 @@ import { ScaleBar } from '../scale-bar/scale-bar';
       [sizes]="sizes()"
       [width]="tile().width"
       [height]="tile().height"
-      [alt]="tile().altText"
+      [alt]="tile().altText || otherwise()"
       [attr.fetchpriority]="first() ? 'high' : null"
       decoding="async"
     />
@@ -49,6 +49,8 @@ export class Picture {
   /** how wide it will stand, for the browser's choice of rendition */
   readonly sizes = input('100vw');
   readonly bar = input(true);
+  /** stands in for words that nobody has written; needed where the picture alone names a link */
+  readonly otherwise = input('');
   /** seen at once: loaded first, not when it comes near */
   readonly first = input(false);
   readonly frame = input<number | null>(null);

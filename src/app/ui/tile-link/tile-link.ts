@@ -2,6 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, input } from '@angular/co
 import { RouterLink } from '@angular/router';
 import type { GalleryTile } from '@shared/contracts/gallery';
 import { lightWords } from '../../core/light-words';
+import { nameWords } from '../../core/name-words';
 import { Picture } from '../picture/picture';
 import { TaxonName } from '../taxon-name/taxon-name';
 
@@ -15,6 +16,7 @@ import { TaxonName } from '../taxon-name/taxon-name';
       <app-picture
         [tile]="tile()"
         [first]="first()"
+        [otherwise]="otherwise()"
         sizes="(max-width: 620px) 100vw, (max-width: 980px) 50vw, (max-width: 1500px) 33vw, 25vw"
       />
       <span class="name"><app-taxon-name [name]="tile().name" /></span>
@@ -52,6 +54,10 @@ export class TileLink {
   readonly tile = input.required<GalleryTile>();
   readonly first = input(false);
 
+  protected readonly otherwise = computed(() => {
+    const { title, name, findNumber } = this.tile();
+    return title || $localize`${name ? nameWords(name) : $localize`Not yet named`}:name:, ${findNumber}:number:`;
+  });
   protected readonly about = computed(() => {
     const { light, publicPlace, findNumber } = this.tile();
     return [lightWords(light), publicPlace, findNumber].filter(Boolean).join(' · ');

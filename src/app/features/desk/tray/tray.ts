@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, linkedSignal, signal, viewChild } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButtonModule } from '@angular/material/button';
-import { MatDialog, MatDialogModule, type MatDialogConfig } from '@angular/material/dialog';
+import { MatDialog, MatDialogModule } from '@angular/material/dialog';
 import { MatMenuModule } from '@angular/material/menu';
 import { MatSnackBar, MatSnackBarModule } from '@angular/material/snack-bar';
 import { Router, RouterLink } from '@angular/router';
@@ -13,6 +13,7 @@ import { rigRoutes } from '@shared/contracts/rigs';
 import { Api } from '../../../core/api';
 import { toApiProblem } from '../../../core/api-problem';
 import { Empty } from '../../../ui/empty/empty';
+import { SHEET } from '../../../ui/forms/sheet';
 import { Icon } from '../../../ui/icon/icon';
 import { ProblemBox } from '../../../ui/problem/problem';
 import { scaleWords } from '../rigs/calibration-words';
@@ -28,15 +29,6 @@ import { choose, keepPresent, NOTHING, type Selection } from './selection';
 import { SettingGiver, type GivenSetting } from './setting-giver';
 import { SizeQuestion, type SizeAnswer } from './size-question';
 import { TrayStore, UNDO_MS } from './tray-store';
-
-/** Beside the pictures where there is room; on a phone the whole screen. */
-const SHEET: MatDialogConfig = {
-  width: '480px',
-  maxWidth: '100vw',
-  height: '100dvh',
-  maxHeight: '100dvh',
-  position: { top: '0', right: '0' },
-};
 
 /** Where uploaded pictures wait until they are sorted into finds. */
 @Component({

@@ -40,7 +40,7 @@ import { observationGroup, ObservationFields } from './observation-fields';
   ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './add-to-find.html',
-  styleUrls: ['./sheet.scss', './add-to-find.scss'],
+  styleUrls: ['../../../../ui/forms/sheet.scss', './add-to-find.scss'],
 })
 export class AddToFind {
   private readonly api = inject(Api);

@@ -47,7 +47,7 @@ const MOST_SHOWN = 6;
   ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './make-find.html',
-  styleUrls: ['./sheet.scss', './make-find.scss'],
+  styleUrls: ['../../../../ui/forms/sheet.scss', './make-find.scss'],
 })
 export class MakeFind {
   private readonly api = inject(Api);
