@@ -57,11 +57,13 @@ export class SaidList {
       .filter(({ kind }) => kind === 'measure')
       .map((note, i) => {
         const structure = this.bench.structureOf(note);
+        const name = $localize`${structureWords(structure ?? '')} ${i + 1}:number:`;
         return {
           note,
           mine: this.isMine(note),
           open: this.notes.selected()?.id === note.id,
-          name: $localize`${structureWords(structure ?? '')} ${i + 1}:number:`,
+          name,
+          removal: $localize`Take ${name}:what: away`,
           size: measureWords(note.geometry, structure, this.bench.scale()).join(', '),
         };
       }),
