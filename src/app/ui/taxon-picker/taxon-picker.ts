@@ -1,4 +1,15 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, output, signal } from '@angular/core';
+import {
+  afterNextRender,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  type ElementRef,
+  inject,
+  input,
+  output,
+  signal,
+  viewChild,
+} from '@angular/core';
 import { MatAutocompleteModule, type MatAutocompleteSelectedEvent } from '@angular/material/autocomplete';
 import type { NameView } from '@shared/contracts/common';
 import type { TaxonName as Taxon } from '@shared/contracts/taxa';
@@ -58,6 +69,16 @@ export class TaxonPicker {
   });
   protected readonly display = (taxon: Taxon | string | null): string =>
     taxon === null || !this.keep() ? '' : typeof taxon === 'string' ? taxon : taxon.name;
+
+  private readonly field = viewChild.required<ElementRef<HTMLInputElement>>('field');
+
+  constructor() {
+    // words typed while a page from the server was not awake yet are words all the same
+    afterNextRender(() => {
+      const { nativeElement } = this.field();
+      if (nativeElement.value) nativeElement.dispatchEvent(new Event('input'));
+    });
+  }
 
   protected prepare(): void {
     void this.taxa.load();

@@ -1,0 +1,32 @@
+import { expect, test } from '@playwright/test';
+
+/* The first page as a visitor gets it: readable before any script has run, and nothing done on it is lost. */
+
+test('the gallery is there without any script', async ({ browser, baseURL }) => {
+  const context = await browser.newContext({ ...(baseURL && { baseURL }), javaScriptEnabled: false });
+  const page = await context.newPage();
+  await page.goto('/');
+  await expect(page.getByRole('link', { name: /Hemitrichia clavata/ }).first()).toBeVisible();
+  await page.getByRole('searchbox').fill('galericulata');
+  await page.getByRole('searchbox').press('Enter');
+  await expect(page).toHaveURL(/q=galericulata/);
+  await expect(page.getByText(/galericulata/).first()).toBeVisible();
+  await context.close();
+});
+
+test('words typed before the page has woken up are searched all the same', async ({ page }) => {
+  let wake = (): void => undefined;
+  const awake = new Promise<void>((resolve) => (wake = resolve));
+  await page.route('**/*.js', async (route) => {
+    await awake;
+    await route.continue();
+  });
+  await page.goto('/', { waitUntil: 'commit' });
+  await page.getByRole('combobox', { name: /taxon/i }).fill('hemitrichia');
+  wake();
+  await page
+    .getByRole('option', { name: /Hemitrichia clavata/ })
+    .first()
+    .click();
+  await expect(page).toHaveURL(/taxon=/);
+});
