@@ -7,6 +7,9 @@ import type { TrueBody, TruePicture, TruePoint } from './pictures/truth.js';
 /** A person at the bench: how far each placed end lies from where it should, standard deviation, px. */
 const POINTING_PX = 0.5;
 
+/** The most bodies that anybody measures in one series. */
+export const ENOUGH = 30;
+
 /** Where a body's ends would be marked, with the small error of a hand. */
 export class Hand {
   constructor(private readonly random: Random) {}
@@ -58,6 +61,27 @@ export class Hand {
   upright(body: TrueBody): NoteGeometry | null {
     const { base, tip } = (body.points ?? {}) as { base?: TruePoint; tip?: TruePoint };
     return base && tip ? { type: 'line', a: this.at(base), b: this.at(tip) } : null;
+  }
+
+  /** from rim to rim; null where the truth doesn't say */
+  acrossCap(body: TrueBody): NoteGeometry | null {
+    const { left, right } = (body.points ?? {}) as { left?: TruePoint; right?: TruePoint };
+    return left && right ? { type: 'line', a: this.at(left), b: this.at(right) } : null;
+  }
+
+  /**
+   * From side to side of a finger. Where it reaches a little over the border it is marked at the border: that
+   * takes off about a hundredth, far less than a finger leaves open.
+   * @throws {Error} where the truth doesn't say
+   */
+  acrossFinger(body: TrueBody, { width, height }: TruePicture): { a: ImagePoint; b: ImagePoint } {
+    const [a, b] = (body.points?.['across'] ?? []) as readonly TruePoint[];
+    if (!a || !b) throw new Error('The truth does not say where the sides of the finger are.');
+    const inside = ({ x, y }: TruePoint): ImagePoint => ({
+      x: Math.min(Math.max(x, 0), width),
+      y: Math.min(Math.max(y, 0), height),
+    });
+    return { a: inside(this.at(a)), b: inside(this.at(b)) };
   }
 
   /** every graduation that is in the picture, marked along the ruling a little inside its lower ends */

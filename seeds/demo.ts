@@ -20,6 +20,9 @@ import type { TruePicture } from './pictures/truth.js';
 /** The demo's story begins this many days before it is filled in. */
 const DAYS_BACK = 40;
 
+/** The finger in the photographer's picture is 13.8 mm broad; it was read from a ruler to half a millimetre. */
+const FINGERTIP_MM = 14;
+
 /** Lies in the data folder while the demo is being filled in: what it was cut off in is cleared and begun again. */
 const MARKER = 'demo-is-being-filled-in';
 
@@ -85,7 +88,8 @@ async function addPeople(db: Database, clock: DemoClock, forTests: boolean): Pro
   for (const { name, role, email, password } of DEMO_PEOPLE) {
     const id = (ids[role] = newId());
     await users.insert({
-      ...{ id, name, role, email, portrait: null, fingertipMm: null, createdAt: clock.now().toISOString() },
+      ...{ id, name, role, email, portrait: null, createdAt: clock.now().toISOString() },
+      fingertipMm: role === 'photographer' ? FINGERTIP_MM : null,
       creditLine: `${name}, Calder Wick Small Life Survey`,
       defaultLicence: 'by-sa',
       passwordHash: await passwords.hash(password),

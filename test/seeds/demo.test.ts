@@ -22,6 +22,11 @@ function newFolder(): string {
   return mkdtempSync(join(tmpdir(), 'motebook-demo-'));
 }
 
+/** numbers of the finds that have series, in the order in which they are told */
+const MEASURED = ['CW-1', 'CW-2', 'CW-4', 'CW-7'];
+/** the find whose picture leads the gallery */
+const HEADS = 'CW-7';
+
 describe('the demo', () => {
   const dataDir = newFolder();
   const config = readConfig({ DATA_DIR: dataDir, LOG_LEVEL: 'silent' });
@@ -55,6 +60,7 @@ describe('the demo', () => {
   const fileOf = async (imageId: string): Promise<TruePicture> => {
     const names: Record<string, string> = {
       'CWSL2214.JPG': 'heads-on-bark.jpg',
+      'CWSL2290.JPG': 'finger-beside-cap.jpg',
       'bench_0041.tif': 'spores-clavata.tif',
       'bench_0057.jpg': 'spores-ellipsoid.jpg',
       'MOL-0312.jpg': 'threads-dark-field.jpg',
@@ -81,7 +87,7 @@ describe('the demo', () => {
 
   it('shows its public pictures, described and named, and none of reference', async () => {
     const { tiles, total } = (await visitor.get('/api/gallery?limit=60')).body as GalleryPage;
-    expect(total).toBe(5);
+    expect(total).toBe(6);
     expect(tiles.every((tile) => tile.name !== null && tile.altText !== '' && tile.title !== '')).toBe(true);
     expect(new Set(tiles.map((tile) => tile.scale?.grounds ?? 'none'))).toEqual(
       new Set(['calibrated', 'estimated', 'none']),
@@ -106,15 +112,41 @@ describe('the demo', () => {
     expect(Math.abs(calibration.um_per_px_x / true_ - 1)).toBeLessThan(2 * calibration.relative_uncertainty);
   });
 
+  it('leads the gallery with the heads on bark', async () => {
+    const [newest] = ((await visitor.get('/api/gallery?limit=1')).body as GalleryPage).tiles;
+    expect(newest).toMatchObject({ findNumber: HEADS, title: 'Yellow heads on a sleeper', width: 1600 });
+  });
+
+  it('takes a scale from a finger, true to within what it says', async () => {
+    const { observations } = await findOf('CW-4');
+    const scale = observations[0]?.pictures[0]?.scale;
+    expect(scale?.grounds).toBe('estimated');
+    const off = Math.abs((scale?.umPerPxX ?? 0) / (truth['finger-beside-cap.jpg'] as TruePicture).umPerPxX - 1);
+    expect(off).toBeLessThan(2 * (scale?.relativeUncertainty ?? 0));
+  });
+
+  it('measures heads that stand upright enough, and a cap', async () => {
+    const lengths = (find: FindView, structure: string, dimension: 'lengthUm' | 'widthUm') =>
+      find.series
+        .filter((one) => one.structure === structure)
+        .flatMap(({ bodies }) => bodies.map((body) => body[dimension]));
+    const heads = lengths(await findOf(HEADS), 'other:total height', 'lengthUm');
+    expect(heads).toHaveLength(5);
+    for (const height of heads) expect(height).toBeGreaterThan(2000);
+    const caps = lengths(await findOf('CW-4'), 'cap', 'widthUm');
+    expect(caps).toHaveLength(1);
+    expect(Math.abs((caps[0] ?? 0) / 3600 - 1)).toBeLessThan(0.15);
+  });
+
   it('corrects a wrong name, and keeps it in the history', async () => {
-    const find = await findOf('CW-1');
+    const find = await findOf(HEADS);
     expect(find.standing).toMatchObject({ name: { name: 'Hemitrichia clavata' }, by: { name: 'Maud Okonjo-Leigh' } });
     expect(find.determinations.map(({ name }) => name.name)).toEqual(['Hemitrichia clavata', 'Trichia varia']);
   });
 
   it('measures bodies to their true size, by every series', async () => {
-    const series = [await findOf('CW-1'), await findOf('CW-2'), await findOf('CW-3')].flatMap((find) => find.series);
-    expect(series.length).toBeGreaterThanOrEqual(5);
+    const series = (await Promise.all(MEASURED.map(findOf))).flatMap((find) => find.series);
+    expect(series.length).toBeGreaterThanOrEqual(6);
     for (const one of series.filter(({ structure }) => structure === 'spore')) {
       const picture = await fileOf((one.bodies[0] as SeriesView['bodies'][number]).imageId);
       const bodies = picture.bodies.filter((body) => body.kind === 'spore');
@@ -128,7 +160,7 @@ describe('the demo', () => {
   });
 
   it('measures what the books say that it should, by its names', async () => {
-    for (const number of ['CW-1', 'CW-2', 'CW-3']) {
+    for (const number of MEASURED) {
       const find = await findOf(number);
       for (const series of find.series) {
         for (const dimension of ['length', 'width'] as const) {
