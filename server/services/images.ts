@@ -73,7 +73,9 @@ export class ImageService {
     const { images, surroundings } = this.options;
     const image = await images.find(imageId);
     if (!image) throw new NotFound('image');
-    if (edit.preparationId && (await surroundings.observationOf(edit.preparationId)) !== image.observationId) {
+    const observationId = edit.preparationId ? await surroundings.observationOf(edit.preparationId) : undefined;
+    // null for a preparation that is not there, and a picture in the tray has no observation either
+    if (observationId === null || (observationId !== undefined && observationId !== image.observationId)) {
       throw new Invalid([
         {
           pointer: '#/preparationId',

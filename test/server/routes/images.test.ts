@@ -1,4 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { newId } from '../../../server/ids.js';
 import { type Browser, type Person, TestApp } from '../../support/app.js';
 import { bringIn, jpegOf, trayed } from '../../support/pictures.js';
 import { World } from '../../support/world.js';
@@ -96,6 +97,11 @@ describe('a picture', () => {
       .patch(`/api/images/${id}`, { preparationId: await world.preparation(there) })
       .expect(422);
     expect(answer.body).toMatchObject({ errors: [{ pointer: '#/preparationId', code: 'other-observation' }] });
+    const [inTray, nowhere] = [await world.image(owner), newId()];
+    for (const picture of [id, inTray]) {
+      const lost = await browser.patch(`/api/images/${picture}`, { preparationId: nowhere }).expect(422);
+      expect(lost.body).toMatchObject({ errors: [{ pointer: '#/preparationId', code: 'other-observation' }] });
+    }
     const slide = await world.preparation(here);
     expect((await browser.patch(`/api/images/${id}`, { preparationId: slide }).expect(200)).body).toMatchObject({
       preparation: { id: slide },
