@@ -28,6 +28,12 @@ interface EditRow {
   author_name: string;
   before: string | null;
   after: string | null;
+  outcome: EditOutcome;
+}
+
+/** An edit with what became of it. */
+export interface RecordedEdit extends KeptEdit {
+  readonly outcome: EditOutcome;
 }
 
 /** Notes as they are now, and the append-only edits that made them so. */
@@ -47,7 +53,7 @@ export class NoteTable {
   }
 
   /** edits after a number, in the server's order; `seq` is the last one's */
-  async editsAfter(imageId: string, after: number): Promise<{ seq: number; edits: KeptEdit[] }> {
+  async editsAfter(imageId: string, after: number): Promise<{ seq: number; edits: RecordedEdit[] }> {
     const rows = (await this.db
       .read('note_edits')
       .join('users', 'users.id', 'note_edits.author_id')
@@ -55,7 +61,7 @@ export class NoteTable {
       .where('note_edits.seq', '>', after)
       .orderBy('note_edits.seq')
       .select('note_edits.*', { author_name: 'users.name' })) as EditRow[];
-    return { seq: rows.at(-1)?.seq ?? after, edits: rows.map(toKeptEdit) };
+    return { seq: rows.at(-1)?.seq ?? after, edits: rows.map(toRecordedEdit) };
   }
 
   async current(imageId: string, trx: Knex.Transaction): Promise<KeptNote[]> {
@@ -142,8 +148,9 @@ function toNote(row: NoteRow): KeptNote {
   };
 }
 
-function toKeptEdit(row: EditRow): KeptEdit {
+function toRecordedEdit(row: EditRow): RecordedEdit {
   return {
+    outcome: row.outcome,
     seq: row.seq,
     author: { id: row.author_id, name: row.author_name },
     edit: {

@@ -1,13 +1,16 @@
 import type { Knex } from 'knex';
 import { applyEdit, type NoteDocument, sameNote } from '../../shared/annotations/document.js';
 import type { Note, NoteEdit } from '../../shared/annotations/note.js';
+import { DomainError } from '../../shared/errors.js';
 import type { EditsView, NotesView, PushedEdits, PushEdits } from '../../shared/contracts/notes.js';
+import type { Actor } from '../../shared/permission/can.js';
 import { type Clock, instant } from '../clock.js';
 import type { Database } from '../db/database.js';
 import type { NoteTable } from '../db/notes.js';
 import type { Series, SeriesTable } from '../db/series.js';
 import { Conflict } from '../problem.js';
 import type { MeasurementService } from './measurements.js';
+import { outcomesFor } from './note-outcomes.js';
 import { fault, type NoteRules, requireRules } from './note-rules.js';
 
 /** What is drawn on pictures, by several writers at once. */
@@ -24,8 +27,10 @@ export class NoteService {
     return this.notes.ofImage(imageId);
   }
 
-  since(imageId: string, after: number): Promise<EditsView> {
-    return this.notes.editsAfter(imageId, after);
+  /** What was done after a number: of one's own layer every edit, of others' layers what came of them. */
+  async since(actor: Actor, imageId: string, after: number): Promise<EditsView> {
+    const { seq, edits } = await this.notes.editsAfter(imageId, after);
+    return { seq, edits: outcomesFor(actor.kind === 'user' ? actor.id : null, edits) };
   }
 
   /**
@@ -33,8 +38,7 @@ export class NoteService {
    * `shared/annotations/document.ts`; an edit that was kept before changes nothing, however often it is sent.
    *
    * @throws {Forbidden} a note of another's layer
-   * @throws {Invalid} beside the first edit that breaks a rule
-   * @throws {DomainError} `wrong-shape`, a drawing that doesn't fit its structure
+   * @throws {Invalid} beside the first edit that breaks a rule, a drawing that doesn't fit its structure among them
    */
   async push(actorId: string, imageId: string, { edits }: PushEdits): Promise<PushedEdits> {
     return this.db.write.transaction(async (trx) => {
@@ -49,7 +53,9 @@ export class NoteService {
           outcomes.push({ id: edit.id, outcome: 'repeated' });
           continue;
         }
-        const step = await this.keep(edit, at, doc, rules, trx);
+        const step = await this.keep(edit, at, doc, rules, trx).catch((error: unknown) => {
+          throw error instanceof DomainError ? fault(at, error.code, error.message) : error;
+        });
         doc = step.doc;
         outcomes.push({ id: edit.id, outcome: step.outcome });
       }

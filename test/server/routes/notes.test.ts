@@ -109,6 +109,60 @@ describe('notes on a picture', () => {
     expect([...replayed.values()]).toEqual((await read()).notes);
   });
 
+  describe('in their history', () => {
+    const PLACE = 'under the third sleeper';
+    const since = async (by: Browser, after: number) =>
+      (await by.get(`/api/images/${imageId}/note-edits?after=${after}`).expect(200)).body as EditsView;
+
+    it('keep what was taken back for who said it', async () => {
+      const [removed, reworded] = [pointer({ text: PLACE }), pointer({ text: `${PLACE}, left` })];
+      const { seq: said } = await pushed(browser, making(removed), making(reworded));
+      const mended = { ...reworded, text: 'wart' };
+      await pushed(browser, removing(removed), changing(reworded, mended));
+      // an edit made without knowing of the removal is kept as dropped
+      await pushed(browser, changing(removed, { ...removed, text: `${PLACE}, right` }));
+
+      expect(JSON.stringify((await since(browser, 0)).edits)).toContain(PLACE);
+      const others = [await server.visit(), await server.signIn(await server.addPerson('keeper'))];
+      for (const other of others) {
+        for (let after = 0; after <= said + 3; after++) {
+          expect(JSON.stringify(await since(other, after))).not.toContain(PLACE);
+        }
+      }
+    });
+
+    it('bring others from any state to the same one, with the same number', async () => {
+      const [a, b, c] = [spore(), pointer(), pointer()];
+      const edits = [
+        making(a),
+        making(b),
+        changing(b, { ...b, text: 'x' }),
+        removing(a),
+        changing(a, { ...a, text: 'too late' }),
+        making(c),
+        changing({ ...b, text: 'x' }, { ...b, text: 'y' }),
+        making(a),
+        removing(c),
+      ];
+      const visitor = await server.visit();
+      const states = [new Map<string, Note>()];
+      const numbers = [0];
+      for (const edit of edits) {
+        numbers.push((await pushed(browser, edit)).seq);
+        states.push(new Map((await read()).notes.map((note) => [note.id, note])));
+      }
+      for (const [i, state] of states.entries()) {
+        const answer = await since(visitor, numbers[i] as number);
+        const caughtUp = applyEdits(
+          state,
+          answer.edits.map(({ edit }) => edit),
+        );
+        expect(caughtUp).toEqual(states.at(-1));
+        expect(answer.seq).toBe(numbers.at(-1));
+      }
+    });
+  });
+
   it("are written in one's own layer alone", async () => {
     const other = await server.addPerson('identifier', 'Maud');
     const note = pointer();
@@ -162,7 +216,9 @@ describe('notes on a picture', () => {
         ],
       },
     });
-    expect((await push(browser, making(bent)).expect(422)).body).toMatchObject({ type: '/problems/wrong-shape' });
+    const answer = await push(browser, making(pointer()), making(bent)).expect(422);
+    expect(answer.body).toMatchObject({ errors: [{ pointer: '#/edits/1', code: 'wrong-shape' }] });
+    expect((await read()).notes).toEqual([]);
   });
 
   it("refuse another's series, and a series of another find or preparation", async () => {
