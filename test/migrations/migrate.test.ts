@@ -94,6 +94,17 @@ describe('migrations', () => {
     expect((await search.page({ limit: 10, words: 'secret' })).total).toBe(0);
   });
 
+  it('let a name of a filled list stand under the other code too, and still not twice under one', async () => {
+    await migrate(file(), stepsBefore('20261201_07'));
+    await fillEveryTable(await connect());
+    await (db as Database).close();
+    const { write } = await open();
+    const known = (await write('taxa').first()) as { code: string };
+    await write('taxa').insert({ ...known, id: 'other', code: 'zoological' });
+    await expect(write('taxa').insert({ ...known, id: 'again' })).rejects.toThrow(/UNIQUE/);
+    expect(await write('determinations').count({ rows: '*' })).toEqual([{ rows: 2 }]);
+  });
+
   it('raise the revision of what is public with each kind of change that shows', async () => {
     const { write } = await open();
     await fillEveryTable(db as Database);

@@ -66,6 +66,9 @@ describe('the list of names', () => {
     const answer = await browser.post('/api/taxa', again).expect(409);
     expect(answer.body).toMatchObject({ type: '/problems/name-exists', parameters: { taxonId: first.id } });
     await browser.post('/api/taxa', { ...again, code: 'zoological' }).expect(200); // codes don't share names
+    const genus = { name: 'Trichia', authorship: '', rank: 'genus', code: 'botanical', parentId: null };
+    await browser.post('/api/taxa', genus).expect(200);
+    await browser.post('/api/taxa', { ...genus, code: 'zoological' }).expect(200); // a slime mould and a snail
   });
 
   it('takes as parent only what is there, accepted and above', async () => {
