@@ -177,7 +177,11 @@ export class ImageTable {
   }
 
   async setWorking(id: string): Promise<void> {
-    await this.db.write<ImageRow>('images').where({ id, state: 'waiting' }).update({ state: 'working' });
+    await this.db
+      .write<ImageRow>('images')
+      .where({ id })
+      .whereIn('state', ['waiting', 'refused'])
+      .update({ state: 'working', refusal: null });
   }
 
   /** false when the picture has been discarded meanwhile */

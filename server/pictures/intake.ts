@@ -20,7 +20,9 @@ export class Intake {
 
   readonly run = async ({ about: id }: Job, signal: AbortSignal): Promise<void> => {
     const image = await this.images.find(id);
-    if (!image || image.state === 'ready' || image.state === 'refused') return;
+    // one that was given up is begun again when the keeper retries its job
+    const refused = image?.state === 'refused' && image.refusal?.code !== 'intake-failed';
+    if (!image || image.state === 'ready' || refused) return;
     await this.images.setWorking(id);
     failPoint('intake:begun');
     const folder = await this.files.making();

@@ -251,6 +251,25 @@ describe('intake', () => {
     expect(await trayed(browser, id)).toMatchObject({ state: 'ready' });
   });
 
+  it('that was given up is taken in when the keeper has its job done again', async () => {
+    const bytes = await jpegOf(300, 200);
+    const id = await server.app.bringIn({ file: bytes, name: 'a.jpg', ownerId: owner.id });
+    const sha = createHash('sha256').update(bytes).digest('hex');
+    const original = join(server.config.dataDir, 'originals', sha.slice(0, 2), sha);
+    renameSync(original, `${original}.away`);
+    for (let attempt = 0; attempt < 3; attempt++) {
+      await server.app.jobs.drain();
+      server.clock.pass(60 * 60_000);
+    }
+    renameSync(`${original}.away`, original);
+    const desk = await server.signIn(await server.addPerson('keeper'));
+    const [job] = (await desk.get('/api/keep/jobs').expect(200)).body as { id: string; state: string }[];
+    expect(job).toMatchObject({ state: 'failed' });
+    await desk.post(`/api/keep/jobs/${job?.id}/retry`).expect(200);
+    await server.app.jobs.drain();
+    expect(await trayed(browser, id)).toMatchObject({ state: 'ready', refusal: null });
+  });
+
   it('notices the same bytes and keeps them once, until the last picture of them goes', async () => {
     const bytes = await jpegOf(300, 200);
     const first = await bringIn(server, owner, bytes, 'first.jpg');
