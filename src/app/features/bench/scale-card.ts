@@ -59,7 +59,6 @@ export class ScaleCard {
   protected readonly mayEdit = this.bench.mayEdit;
   protected readonly imageId = computed(() => this.bench.image()?.id);
   protected readonly isReference = computed(() => this.bench.image()?.role === 'reference');
-  protected readonly isReference = computed(() => this.bench.image()?.role === 'reference');
   protected readonly view = computed(() => this.bench.image()?.currentScale ?? null);
   protected readonly line = computed(() => {
     const scale = this.bench.scale();
