@@ -24,7 +24,9 @@ import { UserTable } from './db/users.js';
 import { JobRunner } from './jobs/job-runner.js';
 import { Postbox } from './mail/postbox.js';
 import { LocalMail, type MailTransport } from './mail/transport.js';
+import { bodies } from './middleware/bodies.js';
 import { limiters, LIMITS, type Limits } from './middleware/limits.js';
+import { personal } from './middleware/personal.js';
 import { problems, unknownPath } from './middleware/problems.js';
 import { security } from './middleware/security.js';
 import { seen } from './middleware/seen.js';
@@ -156,7 +158,7 @@ export function createApp(options: AppOptions): App {
     day: () => today(clock),
   });
   app.use(pages.files, cookieParser(), handlers, seen(people));
-  app.use('/api', express.json({ limit: '2mb' }), xsrf.protect);
+  app.use('/api', personal, bodies, xsrf.protect);
 
   const mount = new Mount(app, new ThingTable(db.read), clock, forTests);
   const limit = limiters(limits);
