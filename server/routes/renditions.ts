@@ -8,7 +8,8 @@ import type { PictureFiles } from '../pictures/picture-files.js';
 import { sendFile } from './gone.js';
 import type { Mount } from './mount.js';
 
-const FOR_EVER = 'max-age=31536000, immutable';
+/** Caches that many share ask again after a minute: a find may be hidden again, and then they must forget it. */
+const FOR_EVER = 'max-age=31536000, immutable, s-maxage=60';
 /** What a browser of somebody who may see a hidden picture keeps, until perhaps somebody else uses it. */
 const FOR_A_DAY = 'max-age=86400';
 
