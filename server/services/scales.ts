@@ -57,7 +57,7 @@ export class ScaleService {
 
   /**
    * @throws {Conflict} `not-ready`; `no-calibration`; `reduced-or-cropped` when the picture has not the
-   *   calibrated frame's size and nobody has said why
+   *   calibrated frame's size, upright or lying, and nobody has said why
    * @throws {NotFound} for a setting of somebody else's
    * @throws {Invalid} for ends outside the picture, an unknown object, an answer that can't be
    * @throws {DomainError} what the domain refuses of a reference
@@ -179,6 +179,8 @@ function fitToSize(
   const { frameWidth, frameHeight } = calibration;
   const scale = scaleOf(calibration);
   if (width === frameWidth && height === frameHeight) return { scale, reducedBy: 1 };
+  // neither a crop nor a reduction is higher than the frame: the camera stood upright, or took itself to
+  if (width === frameHeight && height === frameWidth) return { scale: turned(scale), reducedBy: 1 };
   const sizes = { width, height, frameWidth, frameHeight };
   if (answer === undefined) {
     throw new Conflict(
@@ -199,6 +201,10 @@ function fitToSize(
   }
   if (reducedBy < 1) throw impossible('larger-than-frame', 'A reduced picture is not larger than its frame.');
   return { scale: scaleAfterResize(scale, frameWidth, width, frameHeight, height), reducedBy };
+}
+
+function turned(scale: Scale): Scale {
+  return { ...scale, umPerPxX: scale.umPerPxY, umPerPxY: scale.umPerPxX };
 }
 
 function impossible(code: string, detail: string): Invalid {

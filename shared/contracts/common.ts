@@ -11,8 +11,8 @@ export const line = (maxLength: number) => z.string().check(z.trim(), z.minLengt
 /** Text that may be empty or run over several lines, trimmed. */
 export const prose = (maxLength: number) => z.string().check(z.trim(), z.maxLength(maxLength));
 
-/** A finite number greater than zero. */
-export const positive = z.number().check(z.positive());
+/** A number greater than zero, so far from the ends of what a number can hold that no quotient of a few leaves it. */
+export const positive = z.number().check(z.minimum(1e-9), z.maximum(1e9));
 
 /** A calendar day, YYYY-MM-DD, that exists. */
 export const Day = z.iso.date();

@@ -70,7 +70,7 @@ export const SetScale = z.discriminatedUnion('by', [
     /** an id of `KNOWN_OBJECTS`, or null for a length that the person states */
     objectId: z.nullable(z.string()),
     lengthUm: z.optional(positive),
-    toleranceUm: z.optional(z.number().check(z.nonnegative())),
+    toleranceUm: z.optional(z.number().check(z.nonnegative(), z.maximum(1e9))),
   }),
   z.strictObject({ by: z.literal('finger'), a: ImagePoint, b: ImagePoint }),
   z.strictObject({

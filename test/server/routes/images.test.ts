@@ -254,6 +254,16 @@ describe('a picture', () => {
       });
     });
 
+    it.each([
+      { by: 'optics', pixelPitchUm: 1e300, magnification: 1e-300, relay: 1, binning: 1 },
+      { by: 'reference', a, b, objectId: null, lengthUm: 1e300, toleranceUm: 0 },
+      { by: 'reference', a, b, objectId: null, lengthUm: 1000, toleranceUm: 1e300 },
+    ])('refuses numbers of which nothing finite can come: %j', async (scale) => {
+      const id = await world.image(owner);
+      expect((await scaleBy(id, scale).expect(422)).body).toMatchObject({ type: '/problems/invalid' });
+      expect((await browser.get(`/api/images/${id}`)).body).toMatchObject({ currentScale: null });
+    });
+
     it('keeps every version, newest first, with who set it', async () => {
       const id = await world.image(owner);
       await scaleBy(id, { by: 'nothing' }).expect(200);
@@ -302,6 +312,14 @@ describe('a picture', () => {
           provenance: { by: 'calibration', reducedBy: 1, graduations: 6, spanUm: 500, toleranceUm: 1.5 },
         });
         expect(view.currentScale?.umPerPxX).toBeCloseTo(0.5, 9);
+      });
+
+      it('takes a picture of the frame on its side, with x and y exchanged', async () => {
+        const settingId = await calibrated();
+        await server.db.write('calibrations').update({ um_per_px_x: 0.5, um_per_px_y: 0.51 });
+        const id = await world.image(owner, { width: 800, height: 1200 });
+        const { currentScale } = (await scaleBy(id, { by: 'setting', settingId }).expect(200)).body as Scaled;
+        expect(currentScale).toMatchObject({ umPerPxX: 0.51, umPerPxY: 0.5, provenance: { reducedBy: 1 } });
       });
 
       it('asks whether another size was reduced or cropped, and believes the answer', async () => {
