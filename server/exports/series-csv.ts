@@ -39,7 +39,7 @@ export function seriesCsv({ series, findNumber, name, medium, stain }: SeriesFil
     body.lengthU,
     body.widthUm,
     body.widthU,
-    body.lengthUm !== null && body.widthUm !== null ? body.lengthUm / body.widthUm : null,
+    ratio(body),
     body.lengthPx,
     body.widthPx,
     body.grounds,
@@ -48,6 +48,12 @@ export function seriesCsv({ series, findNumber, name, medium, stain }: SeriesFil
   ]);
   const text = stringify([...about, COLUMNS, ...rows], { escape_formulas: true, record_delimiter: 'windows' });
   return `\uFEFF${text}`;
+}
+
+/** Needs no scale; without one, pixels are taken as square. */
+function ratio({ lengthUm, widthUm, lengthPx, widthPx }: SeriesView['bodies'][number]): number | null {
+  const [length, width] = lengthUm !== null && widthUm !== null ? [lengthUm, widthUm] : [lengthPx, widthPx];
+  return length === null || !width ? null : length / width;
 }
 
 const ORNAMENT = { true: 'included', false: 'left out', null: 'not said' } as const;

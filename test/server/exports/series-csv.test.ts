@@ -39,6 +39,18 @@ const FILE: SeriesFile = {
         lengthU: null,
         widthU: null,
       },
+      {
+        noteId: 'o',
+        imageId: 'i',
+        grounds: 'none',
+        scaleRelativeUncertainty: null,
+        lengthPx: 60,
+        widthPx: 40,
+        lengthUm: null,
+        widthUm: null,
+        lengthU: null,
+        widthU: null,
+      },
     ],
     createdAt: '2026-03-01T09:00:00.000Z',
     mayMeasure: false,
@@ -51,10 +63,11 @@ describe('the file of a series', () => {
     expect(lines[0]).toBe('\uFEFFfind,CW-214');
     expect(lines).toContain('ornament,included');
     expect(lines).toContain('medium,not said');
-    expect(lines.slice(-4)).toEqual([
+    expect(lines.slice(-5)).toEqual([
       'body,length (µm),u length (µm),width (µm),u width (µm),Q (1),length (px),width (px),scale known by,u scale (fraction),picture',
       '1,12.5,0.18,10,0.17,1.25,50,40,calibrated,0.002,i',
       '2,,,,,,48,,none,,i',
+      '3,,,,,1.5,60,40,none,,i',
       '',
     ]);
   });
