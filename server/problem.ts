@@ -48,6 +48,19 @@ export class Conflict extends HttpProblem {
   }
 }
 
+/** There was no room to keep something: nothing of the request was done. */
+export class DiskFull extends HttpProblem {
+  constructor() {
+    super(507, 'disk-full', 'There is no room to keep this.');
+  }
+}
+
+/** Whether an error of the system or of SQLite says that the disk, or somebody's share of it, is full. */
+export function isDiskFull(error: unknown): boolean {
+  const code = typeof error === 'object' && error !== null && 'code' in error ? error.code : null;
+  return code === 'ENOSPC' || code === 'EDQUOT' || code === 'SQLITE_FULL';
+}
+
 export class Invalid extends HttpProblem {
   constructor(errors: readonly FieldError[]) {
     super(422, 'invalid', errors.map((e) => `${e.pointer}: ${e.detail}`).join('; '), {}, errors);

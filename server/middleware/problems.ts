@@ -3,7 +3,7 @@ import type { ErrorRequestHandler, RequestHandler } from 'express';
 import type { Logger } from 'pino';
 import { DomainError } from '../../shared/errors.js';
 import type { Problem } from '../../shared/contracts/problems.js';
-import { HttpProblem, NotFound } from '../problem.js';
+import { DiskFull, HttpProblem, isDiskFull, NotFound } from '../problem.js';
 
 /** The one place where errors become RFC 9457 answers. */
 export function problems(log: Logger): ErrorRequestHandler {
@@ -14,7 +14,7 @@ export function problems(log: Logger): ErrorRequestHandler {
     }
     const instance = `/requests/${randomUUID().slice(0, 8)}`;
     const problem = toHttpProblem(error);
-    if (!problem) log.error({ err: error, instance, url: req.originalUrl }, 'unexpected error');
+    if (!problem || problem.status === 507) log.error({ err: error, instance, url: req.originalUrl }, problem?.message ?? 'unexpected error');
     const status = problem?.status ?? 500;
     const body: Problem = {
       type: `/problems/${problem?.code ?? 'unexpected'}`,
@@ -37,6 +37,7 @@ export const unknownPath: RequestHandler = () => {
 /** null for what nobody expected. */
 function toHttpProblem(error: unknown): HttpProblem | null {
   if (error instanceof HttpProblem) return error;
+  if (isDiskFull(error)) return new DiskFull();
   if (error instanceof DomainError) return new HttpProblem(422, error.code, error.message, error.parameters);
   if (!isHttpError(error)) return null;
   // express.json, multer and csrf-csrf throw errors that carry a status and are meant to be shown

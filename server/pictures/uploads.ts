@@ -11,6 +11,7 @@ import { newId } from '../ids.js';
 import { NotFound } from '../problem.js';
 import type { Arrivals } from './arrivals.js';
 import type { PictureFiles } from './picture-files.js';
+import { roomIn, uploadProblem } from './upload-problem.js';
 
 export const UPLOAD_PATH = '/api/uploads';
 /** Unfinished uploads that nobody went on with go after this. */
@@ -68,9 +69,10 @@ export class Uploads {
         await this.finish(id);
         return {};
       },
-      onResponseError: (_req, error) => {
-        if (error instanceof Error) log.error({ err: error }, 'an upload failed');
-        return undefined;
+      onResponseError: async (_req, error) => {
+        const problem = uploadProblem(error, await roomIn(files.uploads));
+        if (problem) log.error({ err: error, status: problem.status_code }, 'an upload failed');
+        return problem ?? undefined;
       },
     });
   }

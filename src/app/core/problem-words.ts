@@ -14,6 +14,7 @@ const WORDS: Readonly<Record<string, Words>> = {
   offline: () => $localize`No answer from Motebook. Check the connection and try again.`,
   unexpected: () => $localize`Something broke on our side. Try again; if it stays, tell the keeper.`,
   busy: () => $localize`Too much is being asked at once. Try again in a moment.`,
+  'disk-full': () => $localize`Motebook's disk is full, so this was not kept. Tell the keeper, and try again then.`,
   'too-many-tries': (f) => $localize`That was too often. Wait ${say(f['seconds'])}:seconds: seconds and try again.`,
   'stale-page': () => $localize`This page has been open too long. Reload it and try again.`,
   'bad-request': () => $localize`Motebook could not read what was sent. Reload the page and try again.`,

@@ -1,5 +1,5 @@
 import { createHash, randomBytes } from 'node:crypto';
-import { readdirSync, utimesSync } from 'node:fs';
+import { readdirSync, rmSync, utimesSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { type DetailedError, Upload } from 'tus-js-client';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -132,6 +132,25 @@ describe('a resumable upload', () => {
     expect(idOf(again.url)).toBe(id);
     const tray = (await (await served.server.signIn(owner)).get('/api/tray')).body as unknown[];
     expect(tray).toHaveLength(1);
+  });
+
+  it('that breaks on our side is answered with a problem that tells nothing of the data folder', async () => {
+    const id = await begin(9);
+    rmSync(folder('originals'), { recursive: true });
+    writeFileSync(folder('originals'), 'in the way');
+    const answer = await raw(
+      'PATCH',
+      `/api/uploads/${id}`,
+      { ...OCTETS, 'Upload-Offset': '0' },
+      Buffer.from('ninebytes'),
+    );
+    expect(answer.status).toBe(500);
+    expect(JSON.parse(await answer.text())).toEqual({ type: '/problems/unexpected', title: 'unexpected', status: 500 });
+    // and nothing is lost: it is brought in as soon as that is mended
+    rmSync(folder('originals'));
+    expect((await raw('HEAD', `/api/uploads/${id}`)).headers.get('upload-offset')).toBe('9');
+    const browser = await served.server.signIn(owner);
+    expect(await trayed(browser, id)).toMatchObject({ bytes: 9 });
   });
 
   it('is refused when it is larger than accepted, before any byte is sent', async () => {
