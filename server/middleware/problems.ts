@@ -14,7 +14,8 @@ export function problems(log: Logger): ErrorRequestHandler {
     }
     const instance = `/requests/${randomUUID().slice(0, 8)}`;
     const problem = toHttpProblem(error);
-    if (!problem || problem.status === 507) log.error({ err: error, instance, url: req.originalUrl }, problem?.message ?? 'unexpected error');
+    if (!problem || problem.status === 507)
+      log.error({ err: error, instance, url: req.originalUrl }, problem?.message ?? 'unexpected error');
     const status = problem?.status ?? 500;
     const body: Problem = {
       type: `/problems/${problem?.code ?? 'unexpected'}`,
