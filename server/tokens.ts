@@ -1,8 +1,9 @@
 import { createHash, randomBytes } from 'node:crypto';
 
 /**
- * A secret that travels in a link. Only its hash is kept, so that a stolen database opens nothing; with 32
- * random bytes there is nothing to guess, and a plain SHA-256 is enough (no salt, no slow hash).
+ * A secret that travels in a link. With its invitation or reset only the hash is kept; with 32 random bytes there
+ * is nothing to guess, and a plain SHA-256 is enough (no salt, no slow hash). The outgoing mail, which the keeper's
+ * desk shows, holds the link itself: until it was used or has lapsed, whoever reads the mail can use it.
  */
 export interface Token {
   /** base64url, for the link */

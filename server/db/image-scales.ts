@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import type { ScaleProvenance, ScaleView } from '../../shared/contracts/scales.js';
 import type { Grounds, Scale } from '../../shared/scale/scale.js';
 import type { Database } from './database.js';
+import { type ScaleColumns, toScale } from './scale-columns.js';
 
 /** One version of a picture's scale. Rows are only ever added: the newest counts, the others are its history. */
 export interface ImageScale {
@@ -15,13 +16,10 @@ export interface ImageScale {
   readonly setAt: string;
 }
 
-interface Row {
+interface Row extends ScaleColumns {
   id: string;
   image_id: string;
   grounds: Grounds;
-  um_per_px_x: number | null;
-  um_per_px_y: number | null;
-  relative_uncertainty: number | null;
   calibration_id: string | null;
   provenance: string;
   set_by: string;
@@ -73,27 +71,13 @@ export class ImageScaleTable {
 }
 
 function toImageScale(row: Row): ImageScale {
-  const provenance = JSON.parse(row.provenance) as ScaleProvenance;
   return {
     id: row.id,
     imageId: row.image_id,
-    scale: toScale(row, provenance),
+    scale: toScale(row),
     calibrationId: row.calibration_id,
-    provenance,
+    provenance: JSON.parse(row.provenance) as ScaleProvenance,
     setBy: row.set_by,
     setAt: row.set_at,
   };
-}
-
-function toScale(row: Row, provenance: ScaleProvenance): Scale | null {
-  const { grounds, um_per_px_x: x, um_per_px_y: y, relative_uncertainty: relativeUncertainty } = row;
-  if (grounds === 'none' || x === null || y === null || relativeUncertainty === null) return null;
-  const limitFraction = limitOf(provenance);
-  return { umPerPxX: x, umPerPxY: y, relativeUncertainty, grounds, ...(limitFraction !== null && { limitFraction }) };
-}
-
-/** The part of the uncertainty that is a maker's limit; see `Scale.limitFraction`. */
-function limitOf(provenance: ScaleProvenance): number | null {
-  if (provenance.by === 'calibration') return provenance.toleranceUm / provenance.spanUm;
-  return provenance.by === 'reference' ? provenance.toleranceUm / provenance.lengthUm : null;
 }

@@ -259,11 +259,6 @@ export class ImageTable {
   async hasOriginal(sha256: string): Promise<boolean> {
     return (await this.db.write<ImageRow>('images').where({ sha256 }).first('id')) !== undefined;
   }
-
-  /** every picture, for checking the data folder */
-  async all(): Promise<Image[]> {
-    return (await this.db.read<ImageRow>('images').orderBy('id')).map(toImage);
-  }
 }
 
 export function toImage(row: ImageRow): Image {

@@ -1,7 +1,8 @@
 import type { Knex } from 'knex';
 import type { DimensionMeasure } from '../../shared/annotations/measure.js';
 import type { NoteGeometry } from '../../shared/annotations/note.js';
-import type { Grounds, Scale } from '../../shared/scale/scale.js';
+import type { Scale } from '../../shared/scale/scale.js';
+import { type ScaleColumns, toScale } from './scale-columns.js';
 
 /** A snapshot of what was drawn on one body. */
 export interface Measurement {
@@ -105,24 +106,7 @@ export class MeasurementTable {
     const row = (await trx('images')
       .join('image_scales', 'image_scales.id', 'images.current_scale_id')
       .where('images.id', imageId)
-      .first(
-        'image_scales.id',
-        'image_scales.grounds',
-        'image_scales.um_per_px_x',
-        'image_scales.um_per_px_y',
-        'image_scales.relative_uncertainty',
-      )) as
-      | {
-          id: string;
-          grounds: Grounds;
-          um_per_px_x: number | null;
-          um_per_px_y: number | null;
-          relative_uncertainty: number | null;
-        }
-      | undefined;
-    if (!row) return { id: null, scale: null };
-    const { grounds, um_per_px_x: x, um_per_px_y: y, relative_uncertainty: u } = row;
-    if (grounds === 'none' || x === null || y === null || u === null) return { id: row.id, scale: null };
-    return { id: row.id, scale: { grounds, umPerPxX: x, umPerPxY: y, relativeUncertainty: u } };
+      .first('image_scales.*')) as (ScaleColumns & { id: string }) | undefined;
+    return row ? { id: row.id, scale: toScale(row) } : { id: null, scale: null };
   }
 }

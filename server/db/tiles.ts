@@ -1,6 +1,7 @@
 import type { Knex } from 'knex';
 import type { ImageTile } from '../../shared/contracts/images.js';
 import type { Grounds } from '../../shared/scale/scale.js';
+import { toScale } from './scale-columns.js';
 
 /** What a query must select for `toTile`; see `withTiles`. */
 export interface TileColumns {
@@ -44,12 +45,11 @@ export function toTile(row: TileColumns): ImageTile {
     altText: row.tile_alt_text,
     colours: JSON.parse(row.tile_colours) as string[],
     renditionWidths: JSON.parse(row.tile_rendition_widths) as number[],
-    scale: toScale(row),
+    scale: toScale({
+      grounds: row.tile_grounds,
+      um_per_px_x: row.tile_um_per_px_x,
+      um_per_px_y: row.tile_um_per_px_y,
+      relative_uncertainty: row.tile_relative_uncertainty,
+    }),
   };
-}
-
-function toScale(row: TileColumns): ImageTile['scale'] {
-  const { tile_grounds: grounds, tile_um_per_px_x: x, tile_um_per_px_y: y, tile_relative_uncertainty: u } = row;
-  if (grounds === null || x === null || y === null || u === null) return null;
-  return { umPerPxX: x, umPerPxY: y, relativeUncertainty: u, grounds };
 }

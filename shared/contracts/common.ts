@@ -17,9 +17,6 @@ export const positive = z.number().check(z.minimum(1e-9), z.maximum(1e9));
 /** A calendar day, YYYY-MM-DD, that exists. */
 export const Day = z.iso.date();
 
-/** An instant, ISO 8601 UTC. */
-export const Instant = z.iso.datetime();
-
 export const Email = z.string().check(z.trim(), z.toLowerCase(), z.email(), z.maxLength(254));
 export const Password = z.string().check(z.minLength(10), z.maxLength(200));
 

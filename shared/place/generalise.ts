@@ -1,4 +1,4 @@
-import { roundDecimal } from '../scale/decimals.js';
+import { roundDecimal } from '../units/decimals.js';
 import { precisionUncertaintyM } from './coordinate-precision.js';
 
 /**

@@ -9,9 +9,6 @@ import type { Scale } from './scale.js';
  */
 export const OPTICS_RELATIVE_UNCERTAINTY = 0.05;
 
-/** Least relative standard uncertainty of a sensor pitch from a picture's metadata; likewise. */
-export const EXIF_RELATIVE_UNCERTAINTY = 0.03;
-
 /**
  * What one pixel covers at the specimen: pitch·binning/(M·relay), µm.
  * @param relay magnification of the adapter, 1 for none

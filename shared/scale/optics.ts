@@ -41,11 +41,6 @@ export function undersampled(umPerPx: number, na: number, nm = GREEN_NM): boolea
   return umPerPx > rayleigh(na, nm) / 2;
 }
 
-/** Finest digit, µm, that a single reading can mean: half the resolved distance. Not so for a mean. */
-export function finestMeaningful(na: number, nm = GREEN_NM): number {
-  return rayleigh(na, nm) / 2;
-}
-
 /** Magnification that shows all and no emptiness: 500 to 1000 × NA; the lower bound from memory. */
 export function usefulMagnification(na: number): { low: number; high: number } {
   positive({ na });

@@ -4,13 +4,11 @@ import { join } from 'node:path';
 import { Upload } from 'tus-js-client';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { openDatabase } from '../../../server/db/database.js';
-import { ImageTable } from '../../../server/db/images.js';
 import { UserTable } from '../../../server/db/users.js';
 import { FAIL_POINTS } from '../../../server/fail-points.js';
 import { newId } from '../../../server/ids.js';
 import { Passwords } from '../../../server/passwords.js';
-import { PictureFiles } from '../../../server/pictures/picture-files.js';
-import { verifyPictures } from '../../../server/pictures/verify.js';
+import { verifyPictures } from '../../support/verify-pictures.js';
 import { PASSWORD } from '../../support/app.js';
 import { jpegOf } from '../../support/pictures.js';
 import { SpawnedServer } from '../../support/spawned.js';
@@ -118,7 +116,7 @@ describe('a picture on its way in survives a kill', () => {
       await running.stop();
 
       const db = await openDatabase(dataDir);
-      expect(await verifyPictures(new PictureFiles(dataDir), await new ImageTable(db).all())).toEqual([]);
+      expect(await verifyPictures(dataDir, db)).toEqual([]);
       await db.close();
       expect(readdirSync(join(dataDir, 'uploads'))).toEqual([]);
     },
@@ -137,7 +135,7 @@ describe('a picture on its way in survives a kill', () => {
     await shown(running.origin, await running.signIn(PHOTOGRAPHER));
     await running.stop();
     const db = await openDatabase(dataDir);
-    expect(await verifyPictures(new PictureFiles(dataDir), await new ImageTable(db).all())).toEqual([]);
+    expect(await verifyPictures(dataDir, db)).toEqual([]);
     await db.close();
   }, 120_000);
 });

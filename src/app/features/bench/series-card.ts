@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, inject, input } from '@an
 import { seriesRoutes, type SeriesView } from '@shared/contracts/series';
 import { structureOf } from '@shared/annotations/structures';
 import { quantityText } from '@shared/scale/rounding';
-import { decimalsFor } from '@shared/scale/decimals';
+import { decimalsFor } from '@shared/units/decimals';
 import { MICROMETRES_PER, unitFor } from '@shared/units/length';
 import { pathOf } from '../../core/api';
 import { SessionStore } from '../../core/session-store';

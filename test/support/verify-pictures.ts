@@ -1,10 +1,11 @@
 import { access, readdir } from 'node:fs/promises';
 import { join } from 'node:path';
-import { type Image, isReady } from '../db/images.js';
-import { sha256Of } from './originals.js';
-import { ACCESS_COPY, type PictureFiles, renditionFile } from './picture-files.js';
+import type { Database } from '../../server/db/database.js';
+import { type Image, type ImageRow, isReady, toImage } from '../../server/db/images.js';
+import { sha256Of } from '../../server/pictures/originals.js';
+import { ACCESS_COPY, PictureFiles, renditionFile } from '../../server/pictures/picture-files.js';
 
-export interface PictureFault {
+interface PictureFault {
   readonly fault:
     | 'original-missing'
     | 'original-changed'
@@ -21,7 +22,9 @@ export interface PictureFault {
  * Holds the data folder against the database: every picture has its original with the right SHA-256, every
  * picture that is shown has all its copies, and what lies there belongs to a picture.
  */
-export async function verifyPictures(files: PictureFiles, images: readonly Image[]): Promise<PictureFault[]> {
+export async function verifyPictures(dataDir: string, db: Pick<Database, 'read'>): Promise<PictureFault[]> {
+  const files = new PictureFiles(dataDir);
+  const images = (await db.read<ImageRow>('images').orderBy('id')).map(toImage);
   const faults: PictureFault[] = [];
   for (const image of images) {
     const found = await originalFault(files, image);
