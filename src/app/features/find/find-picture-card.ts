@@ -28,7 +28,14 @@ import { CarryAway } from './carry-away';
           <span class="soft">{{ picture().creditLine }}, <app-licence [licence]="picture().licence" /></span>
         </p>
         @if (mayEdit()) {
-          <button type="button" mat-button (click)="openDetails()" [attr.aria-label]="detailsLabel()" i18n>
+          <button
+            [id]="'details-' + picture().id"
+            type="button"
+            mat-button
+            (click)="openDetails()"
+            [attr.aria-label]="detailsLabel()"
+            i18n
+          >
             Details
           </button>
           @if (failed()) {

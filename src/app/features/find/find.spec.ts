@@ -201,6 +201,7 @@ describe('Find', () => {
     expect(document.querySelector('app-picture-details')).toBeNull();
     expect(text('app-observation h3')).toBe('Slide 2');
     expect(element().querySelectorAll('h3 ~ app-justified app-find-picture-card')).toHaveLength(3);
+    expect(document.activeElement?.getAttribute('aria-label')).toBe('Details of Spores in water');
   });
 
   it('tells the whole history of names, the standing one first, with reasons', async () => {

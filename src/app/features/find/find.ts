@@ -1,9 +1,12 @@
 import {
+  afterNextRender,
   ChangeDetectionStrategy,
   Component,
   computed,
+  DOCUMENT,
   effect,
   inject,
+  Injector,
   input,
   RESPONSE_INIT,
   signal,
@@ -51,6 +54,9 @@ import { VisibilityPanel } from './visibility-panel';
   styleUrl: './find.scss',
 })
 export class Find {
+  private readonly document = inject(DOCUMENT);
+  private readonly injector = inject(Injector);
+
   /** from the address */
   readonly findId = input.required<string>();
 
@@ -92,7 +98,10 @@ export class Find {
   /** Describing a picture answers with the picture alone. */
   protected takePicture(image: ImageView): void {
     const find = this.find();
-    if (find) this.answer.set(withPicture(find, image));
+    if (!find) return;
+    this.answer.set(withPicture(find, image));
+    // It may have moved to another preparation: the keyboard goes on where the picture is now.
+    afterNextRender(() => this.document.getElementById(`details-${image.id}`)?.focus(), { injector: this.injector });
   }
 
   private titleOf(find: FindView): string {
