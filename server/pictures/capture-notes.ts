@@ -88,8 +88,9 @@ function captureTime(tags: Tags): { local: string | null; offset: string | null 
     const local = `${year}-${month}-${day}T${hour}:${minute}:${second}`;
     const read = new Date(`${local}Z`); // 0000:00:00 and the 31st of April are no times
     if (Number.isNaN(read.getTime()) || read.toISOString().slice(0, 19) !== local || Number(year) === 0) continue;
-    const offset = /^[+-]\d\d:\d\d$/.exec(text(tags[zone]) ?? '');
-    return { local, offset: offset ? offset[0] : null };
+    const offset = /^[+-]\d\d:\d\d$/.exec(text(tags[zone]) ?? '')?.[0] ?? null;
+    // +99:99 is written like an offset and is none
+    return { local, offset: offset !== null && Number.isNaN(Date.parse(`${local}${offset}`)) ? null : offset };
   }
   return { local: null, offset: null };
 }

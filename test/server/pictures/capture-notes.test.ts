@@ -27,6 +27,11 @@ describe('what a file says of its making', () => {
     },
   );
 
+  it.each(['+99:99', '-25:00', '+01:75'])('takes %s for no offset: no instant could be told with it', (offset) => {
+    const tags = { DateTimeOriginal: '2025:11:03 10:42:00', OffsetTimeOriginal: offset };
+    expect(capture(tags)).toMatchObject({ local: '2025-11-03T10:42:00', offset: null });
+  });
+
   it('does not say the maker twice', () => {
     expect(capture({ Make: 'HOLLIN', Model: 'Hollin H2' }).camera).toBe('Hollin H2');
     expect(capture({ Make: 'Hollin Optical', Model: 'H2' }).camera).toBe('Hollin Optical H2');
