@@ -265,6 +265,17 @@ describe('notes on a picture', () => {
       expect(await bodies()).toMatchObject([{ lengthPx: 50, widthPx: null }]);
     });
 
+    it('measure nothing while both ends lie on one spot', async () => {
+      const cross = spore().geometry as Extract<Note['geometry'], { type: 'cross' }>;
+      const spot = { a: { x: 9, y: 9 }, b: { x: 9, y: 9 } };
+      await pushed(
+        browser,
+        making(spore({ geometry: { ...cross, across: spot } })),
+        making(spore({ geometry: { ...cross, along: spot, across: null } })),
+      );
+      expect(await bodies()).toMatchObject([{ lengthPx: 50, widthPx: null }]);
+    });
+
     it('supersede what was drawn before, and keep it', async () => {
       const note = spore();
       const wider = {
