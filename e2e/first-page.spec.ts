@@ -30,3 +30,15 @@ test('words typed before the page has woken up are searched all the same', async
     .click();
   await expect(page).toHaveURL(/taxon=/);
 });
+
+test('the first page brings less than 250 KB of script, compressed', async ({ page }) => {
+  const scripts: Promise<number>[] = [];
+  page.on('requestfinished', (request) => {
+    if (request.resourceType() === 'script')
+      scripts.push(request.sizes().then(({ responseBodySize }) => responseBodySize));
+  });
+  await page.goto('/', { waitUntil: 'networkidle' });
+  const bytes = (await Promise.all(scripts)).reduce((sum, size) => sum + size, 0);
+  expect(scripts.length).toBeGreaterThan(0);
+  expect(bytes).toBeLessThan(250 * 1024);
+});
