@@ -40,5 +40,5 @@ test('the first page brings less than 250 KB of script, compressed', async ({ pa
   await page.goto('/', { waitUntil: 'networkidle' });
   const bytes = (await Promise.all(scripts)).reduce((sum, size) => sum + size, 0);
   expect(scripts.length).toBeGreaterThan(0);
-  expect(bytes).toBeLessThan(250 * 1024);
+  expect(bytes).toBeLessThan(250_000);
 });
