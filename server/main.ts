@@ -5,6 +5,9 @@ import { systemClock } from './clock.js';
 import { openWithDemo } from '../seeds/demo.js';
 import { readConfig } from './config.js';
 
+/** How long requests under way may go on after the server was asked to stop. */
+const GRACE_MS = 10_000;
+
 /** Opens the data folder, then listens; closes in order when asked to stop. */
 async function main(): Promise<void> {
   const config = readConfig(process.env);
@@ -30,6 +33,8 @@ async function main(): Promise<void> {
         .then(() => process.exit(0));
     });
     server.closeIdleConnections();
+    // whoever is still sending goes on later: uploads resume
+    setTimeout(() => server.closeAllConnections(), GRACE_MS).unref();
   };
   process.once('SIGINT', stop);
   process.once('SIGTERM', stop);

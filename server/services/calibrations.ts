@@ -39,12 +39,14 @@ export function fitMarks(input: Pick<NewCalibration, 'marks' | 'crossMarks' | 's
   );
   const scale = calibrationScale(fits);
   const weaker = fits.reduce((a, b) => (b.relativeUncertainty > a.relativeUncertainty ? b : a)) as CalibrationFit;
+  const referenceRelative = weaker.standardUncertaintyReference / weaker.umPerPx;
   return {
     umPerPxX: scale.umPerPxX,
     umPerPxY: scale.umPerPxY,
     relativeUncertainty: scale.relativeUncertainty,
-    fitRelative: weaker.standardUncertaintyFit / weaker.umPerPx,
-    referenceRelative: weaker.standardUncertaintyReference / weaker.umPerPx,
+    // with Student's widening for few marks, so that the two parts make up the whole
+    fitRelative: Math.sqrt(Math.max(0, weaker.relativeUncertainty ** 2 - referenceRelative ** 2)),
+    referenceRelative,
     residualSdPx: weaker.residualSdPx,
     graduations: fits.reduce((count, fit) => count + fit.count, 0),
     spanUm: weaker.spanUm,

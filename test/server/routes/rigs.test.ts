@@ -55,9 +55,8 @@ describe('a rig', () => {
     // 1.5 µm over 1000 µm, rectangular: 0.0015/√3; marks without scatter add the least that pointing can, and no more
     expect(calibration.referenceRelative).toBeCloseTo(0.0015 / Math.sqrt(3), 9);
     expect(calibration.fitRelative).toBeLessThan(2e-4);
-    // nine degrees of freedom: t(0.975, 9)/z = 2.262157/1.959964
-    const widened = calibration.fitRelative * 1.154183;
-    expect(calibration.relativeUncertainty).toBeCloseTo(Math.hypot(0.0015 / Math.sqrt(3), widened), 9);
+    const together = Math.hypot(calibration.referenceRelative, calibration.fitRelative);
+    expect(calibration.relativeUncertainty).toBeCloseTo(together, 12);
     const seen = (await browser.get(`/api/rigs/${rig.id}`)).body as RigView;
     expect(seen.settings[0]).toMatchObject({
       calibration: { id: calibration.id },

@@ -1,7 +1,7 @@
 import type { Note, NoteEdit } from '@shared/annotations/note';
 import { px } from '@shared/geometry/points';
 import { NO_HISTORY, redo, remember, undo } from './history';
-import { acknowledge, documentOf, receive, write, type Journal } from './note-journal';
+import { acknowledge, documentOf, letGo, receive, write, type Journal } from './note-journal';
 
 const note = (id: string, text: string): Note => ({
   id,
@@ -77,6 +77,27 @@ describe('the journal of a picture', () => {
     const read = receive(drawn, { seq: 1, edits: [made('a', 'one')] });
     expect(read.unsent).toEqual([]);
     expect(texts(read)).toEqual(['one']);
+  });
+});
+
+describe('letting go of what the server refuses', () => {
+  const journal = [
+    made('a', 'first'),
+    made('b', 'second'),
+    worded('a', 'first', 'more', 'w1'),
+    made('c', 'third'),
+  ].reduce(write, EMPTY);
+
+  it('takes the edit that was named and what was built on it, and keeps the rest', () => {
+    const let1 = letGo(journal, ['#/edits/0/after/geometry']);
+    expect(texts(let1.journal)).toEqual(['second', 'third']);
+    expect(let1.gone).toEqual(['make-a', 'w1']);
+    expect(texts(letGo(journal, ['#/edits/2', '#/edits/3']).journal)).toEqual(['first', 'second']);
+  });
+
+  it('takes the oldest where none was named', () => {
+    expect(letGo(journal, []).gone).toEqual(['make-a', 'w1']);
+    expect(letGo(EMPTY, []).gone).toEqual([]);
   });
 });
 

@@ -55,3 +55,22 @@ export function receive(
   }
   return { base, seq: answer.seq, sent, unsent };
 }
+
+/**
+ * Lets go of what the server will never have and of what was built on it, and of nothing else.
+ *
+ * @param pointers JSON Pointers of its refusal, `#/edits/3/after`; without one that names an edit, the oldest is meant
+ */
+export function letGo(journal: Journal, pointers: readonly string[]): { journal: Journal; gone: readonly string[] } {
+  const named = pointers.flatMap((pointer) => /^#\/edits\/(\d+)/.exec(pointer)?.[1] ?? []).map(Number);
+  const refused = new Set(named.length > 0 ? named : [0]);
+  const notes = new Set<string>();
+  const gone = journal.unsent.filter(({ noteId }, place) => {
+    if (refused.has(place)) notes.add(noteId);
+    return notes.has(noteId);
+  });
+  return {
+    journal: { ...journal, unsent: journal.unsent.filter((edit) => !gone.includes(edit)) },
+    gone: gone.map(({ id }) => id),
+  };
+}

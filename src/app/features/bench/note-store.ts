@@ -24,7 +24,7 @@ import { toApiProblem, type ApiProblem } from '../../core/api-problem';
 import { SessionStore } from '../../core/session-store';
 import { NO_HISTORY, redo, remember, undo } from './history';
 import { BATCH, NoteExchange } from './note-exchange';
-import { acknowledge, documentOf, receive, write, type Journal } from './note-journal';
+import { acknowledge, documentOf, letGo, receive, write, type Journal } from './note-journal';
 import { UnsentEdits } from './unsent-edits';
 
 /** How often others' edits are asked for while the page is seen, ms. */
@@ -176,11 +176,13 @@ export class NoteStore {
     this.nudge.next();
   }
 
-  /** Lets go of what the server will never have, so that work can go on. */
+  /** Lets go of what the server will never have, so that the rest can go out. */
   letGo(): void {
-    for (const edit of this.journal().unsent) this.forget(edit.id);
-    this.journal.update((journal) => ({ ...journal, unsent: [] }));
-    this.trouble.set(null);
+    const pointers = this.trouble()?.fields.map(({ pointer }) => pointer) ?? [];
+    const { journal, gone } = letGo(this.journal(), pointers);
+    gone.forEach((id) => this.forget(id));
+    this.journal.set(journal);
+    this.retry();
   }
 
   /** The name of the person in whose layer a note lies; null for one not known here. */
