@@ -4,10 +4,10 @@ import type { Scale } from './scale.js';
 
 /**
  * Least relative standard uncertainty of a scale that was only calculated. One camera's focal-plane tag
- * gave its sensor 2.9 % too wide, and nominal powers missed a measured field by 10.8 %: 5 %, so that
- * U = 10 %. Common practice, no source.
+ * gave its sensor 2.9 % too wide, and nominal powers missed a measured field by 10.8 %: 6 %, so that
+ * U = 12 % holds both. Common practice, no source.
  */
-export const OPTICS_RELATIVE_UNCERTAINTY = 0.05;
+export const OPTICS_RELATIVE_UNCERTAINTY = 0.06;
 
 /**
  * What one pixel covers at the specimen: pitch·binning/(M·relay), µm.

@@ -18,7 +18,12 @@ import {
   usefulMagnification,
   waveDepthOfField,
 } from '../../../shared/scale/optics.js';
-import { cropFactor, pitchAfterDigitalZoom, sensorWidthMm } from '../../../shared/scale/optics-scale.js';
+import {
+  cropFactor,
+  pitchAfterDigitalZoom,
+  sensorWidthMm,
+  OPTICS_RELATIVE_UNCERTAINTY,
+} from '../../../shared/scale/optics-scale.js';
 import { codeOf, expectClose } from '../../support/close.js';
 
 describe('what an objective resolves', () => {
@@ -154,10 +159,19 @@ describe('scale by calculation', () => {
 
   it('is an estimate of at least 5 %', () => {
     const optics = { pixelPitchUm: 3.45, binning: 1, magnification: 40, relay: 0.5 };
-    expect(opticsScale(optics)).toMatchObject({ grounds: 'estimated', relativeUncertainty: 0.05 });
-    expect(opticsScale({ ...optics, relativeUncertainty: 0.01 }).relativeUncertainty).toBe(0.05);
+    expect(opticsScale(optics)).toMatchObject({ grounds: 'estimated', relativeUncertainty: 0.06 });
+    expect(opticsScale({ ...optics, relativeUncertainty: 0.01 }).relativeUncertainty).toBe(0.06);
     expect(opticsScale({ ...optics, relativeUncertainty: 0.1 }).relativeUncertainty).toBe(0.1);
     expect(codeOf(() => opticsScale({ ...optics, magnification: 0 }))).toBe('not-positive');
+  });
+});
+
+describe('nominal powers', () => {
+  it('miss a measured field by no more than a calculated scale allows', () => {
+    // 267 µm from the powers engraved on the parts, 241 µm by a stage micrometer; common practice, no source
+    const miss = 267 / 241 - 1;
+    expect(miss).toBeCloseTo(0.108, 3);
+    expect(2 * OPTICS_RELATIVE_UNCERTAINTY).toBeGreaterThan(miss);
   });
 });
 
