@@ -42,6 +42,8 @@ for (const colorScheme of ['light', 'dark'] as const) {
           at = screen.name;
           await page.goto(screen.path, { waitUntil: 'networkidle' });
           await expect(page.getByRole('heading').first()).toBeVisible();
+          await screen.open?.(page);
+          await page.waitForLoadState('networkidle');
           const { violations } = await new AxeBuilder({ page })
             .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
             .analyze();

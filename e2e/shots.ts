@@ -25,11 +25,13 @@ try {
       );
       await context.clearCookies();
       if (role !== 'visitor') await signInAs(context.request, role);
-      for (const { name, path } of screens) {
+      for (const { name, path, open } of screens) {
         for (const width of WIDTHS) {
           const page = await context.newPage();
           await page.setViewportSize({ width, height: width === 390 ? 844 : 900 });
           await page.goto(path, { waitUntil: 'networkidle' });
+          await open?.(page);
+          await page.waitForLoadState('networkidle');
           await page.screenshot({ path: join(folder, `${name}-${width}-${colorScheme}.png`), fullPage: true });
           await page.close();
           process.stdout.write(`${name} ${width} ${colorScheme}\n`);
