@@ -42,3 +42,21 @@ test('the first page brings less than 250 KB of script, compressed', async ({ pa
   expect(scripts.length).toBeGreaterThan(0);
   expect(bytes).toBeLessThan(250_000);
 });
+
+test('what the server rendered wakes up as it stands: nothing is fetched or drawn again', async ({ page }) => {
+  const asked: string[] = [];
+  page.on('request', (request) => {
+    const { pathname } = new URL(request.url());
+    if (pathname.startsWith('/api/')) asked.push(pathname);
+  });
+  await page.route(/(main|chunk|polyfills)-[^/]*\.js$/, async (route) => {
+    await expect(page.locator('main img').first()).toBeVisible();
+    await page.locator('main img').evaluateAll((pictures) => pictures.forEach((one) => (one.ariaLabel = 'rendered')));
+    await route.continue();
+  });
+  await page.goto('/', { waitUntil: 'networkidle' });
+  expect(asked).toEqual(['/api/session']);
+  const pictures = page.locator('main img');
+  expect(await pictures.count()).toBeGreaterThan(0);
+  for (const picture of await pictures.all()) await expect(picture).toHaveAttribute('aria-label', 'rendered');
+});

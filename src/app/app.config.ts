@@ -10,7 +10,6 @@ import {
   provideRouter,
   TitleStrategy,
   withComponentInputBinding,
-  withEnabledBlockingInitialNavigation,
   withInMemoryScrolling,
   withRouterConfig,
 } from '@angular/router';
@@ -24,8 +23,6 @@ export const appConfig: ApplicationConfig = {
     provideRouter(
       routes,
       withComponentInputBinding(),
-      // What the server rendered stays in sight until its page's script is there; otherwise it blinks.
-      withEnabledBlockingInitialNavigation(),
       // "Gallery" from far down in the gallery leads to its beginning.
       withRouterConfig({ onSameUrlNavigation: 'reload' }),
       withInMemoryScrolling({ scrollPositionRestoration: 'enabled', anchorScrolling: 'enabled' }),

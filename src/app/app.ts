@@ -1,6 +1,14 @@
+import { Location } from '@angular/common';
 import { DOCUMENT, inject, Component, ChangeDetectionStrategy, effect } from '@angular/core';
 import { toSignal } from '@angular/core/rxjs-interop';
-import { NavigationEnd, Router, RouterOutlet, type ActivatedRouteSnapshot } from '@angular/router';
+import {
+  NavigationEnd,
+  Router,
+  RouterOutlet,
+  type ActivatedRouteSnapshot,
+  type Data,
+  type Routes,
+} from '@angular/router';
 import { filter, map, startWith } from 'rxjs';
 import { Footer } from './core/shell/footer';
 import { Header } from './core/shell/header';
@@ -17,11 +25,16 @@ export class App {
   private readonly router = inject(Router);
   private readonly document = inject(DOCUMENT);
 
+  /** Until the first page's script is there the address alone tells, so that no light goes on before the bench. */
+  private readonly first = dataBegunWith(this.router.config, inject(Location).path());
+
   protected readonly darkRoom = toSignal(
     this.router.events.pipe(
       filter((event) => event instanceof NavigationEnd),
       startWith(null),
-      map(() => deepest(this.router.routerState.snapshot.root).data['darkRoom'] === true),
+      map(
+        (arrived) => (arrived ? deepest(this.router.routerState.snapshot.root).data : this.first)['darkRoom'] === true,
+      ),
     ),
     { initialValue: false },
   );
@@ -36,6 +49,12 @@ export class App {
     event.preventDefault();
     this.document.getElementById('content')?.focus();
   }
+}
+
+/** Data of the route whose path begins with the address's first part. */
+function dataBegunWith(routes: Routes, address: string): Data {
+  const part = address.split(/[/?#]/)[1];
+  return routes.find(({ path }) => path?.split('/')[0] === part)?.data ?? {};
 }
 
 function deepest(route: ActivatedRouteSnapshot): ActivatedRouteSnapshot {
