@@ -49,6 +49,7 @@ describe('Gallery', () => {
   let http: HttpTestingController;
   let harness: RouterTestingHarness;
   const element = () => harness.routeNativeElement as HTMLElement;
+  const heading = () => element().querySelector('h1')?.textContent?.trim().replace(/\s+/g, ' ');
   const tiles = () => Array.from(element().querySelectorAll('app-wall img'), (img) => img.getAttribute('alt'));
 
   beforeEach(async () => {
@@ -77,6 +78,14 @@ describe('Gallery', () => {
   }
   async function answer(body: GalleryPage): Promise<void> {
     http.expectOne((request) => request.url === '/api/gallery').flush(body);
+    await harness.fixture.whenStable();
+  }
+
+  /** No picture, whereupon the list of taxa is asked for. */
+  async function answerNothing(taxa: object[]): Promise<void> {
+    http.expectOne((request) => request.url === '/api/gallery').flush(page([]));
+    await expect.poll(() => element().textContent).toContain('No picture fits');
+    http.expectOne('/api/taxa').flush(taxa);
     await harness.fixture.whenStable();
   }
 
@@ -127,6 +136,14 @@ describe('Gallery', () => {
     ]);
     expect(element().querySelector('app-hero')).toBeNull();
     expect(tiles()).toEqual(['Picture 1']);
+    expect(heading()).toBe('Pictures of Trichia with “depot”');
+  });
+
+  it('says in its heading and its title what is searched for', async () => {
+    await open('/?q=depot');
+    await answer(page([tile(1)]));
+    expect(heading()).toBe('Pictures with “depot”');
+    expect(document.title).toBe('“depot” · Motebook');
   });
 
   it('says how many there are, also those not fetched yet', async () => {
@@ -187,9 +204,21 @@ describe('Gallery', () => {
 
   it('says that nothing fits, and how to see all again', async () => {
     await open('/?q=unicorn');
-    await answer(page([]));
+    await answerNothing([]);
     expect(element().textContent).toContain('No picture fits');
     expect(element().querySelector('app-empty a')?.getAttribute('href')).toBe('/');
+  });
+
+  it('offers taxa with a name like the words that fit no picture', async () => {
+    await open('/?q=hemitrichia clavta');
+    const taxon = { rank: 'species', code: 'botanical', authorship: '', acceptedId: null };
+    await answerNothing([
+      { ...taxon, id: id(7), name: 'Hemitrichia clavata' },
+      { ...taxon, id: id(8), name: 'Mycena pura' },
+    ]);
+    const names = () => element().querySelector('app-near-names a');
+    await expect.poll(names).not.toBeNull();
+    expect([names()?.textContent, names()?.getAttribute('href')]).toEqual(['Hemitrichia clavata', `/taxa/${id(7)}`]);
   });
 
   it('says what went wrong and tries again', async () => {

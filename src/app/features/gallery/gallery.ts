@@ -17,13 +17,26 @@ import { FilterLine } from './filter-line';
 import { GalleryStore, type GalleryFilter } from './gallery-store';
 import { Hero } from './hero';
 import { heroOf } from './hero-of';
+import { NearNames } from './near-names';
 import { Wall } from './wall';
 import { WallSkeleton } from './wall-skeleton';
 
 /** The public gallery: the newest picture large, and below it the wall. What is looked for stands in the address. */
 @Component({
   selector: 'app-gallery',
-  imports: [MatButtonModule, RouterLink, Empty, FilterLine, Hero, ProblemBox, Rule, TaxonName, Wall, WallSkeleton],
+  imports: [
+    MatButtonModule,
+    RouterLink,
+    Empty,
+    FilterLine,
+    Hero,
+    NearNames,
+    ProblemBox,
+    Rule,
+    TaxonName,
+    Wall,
+    WallSkeleton,
+  ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './gallery.html',
   styleUrl: './gallery.scss',
@@ -42,6 +55,8 @@ export class Gallery {
     const [taxon, q] = [this.taxon(), this.q()?.trim()];
     return { ...(taxon ? { taxon } : {}), ...(q ? { q } : {}) };
   });
+  /** what is searched for, as it was typed */
+  protected readonly words = computed(() => this.filter().q ?? null);
   protected readonly filtered = computed(() => Object.keys(this.filter()).length > 0);
   private readonly held = computed(() => this.store.holds(this.filter(), this.after() ?? null));
 
@@ -100,9 +115,9 @@ export class Gallery {
   private describe(meta: PageMeta): void {
     effect(() => {
       const cover = this.hero() ?? this.tiles()[0] ?? null;
-      const name = this.taxonName();
+      const [name, words] = [this.taxonName(), this.words()];
       meta.describe({
-        title: name ? nameWords(name) : 'Motebook',
+        title: [...(name ? [nameWords(name)] : []), ...(words ? [`“${words}”`] : [])].join(', ') || 'Motebook',
         description: $localize`A gallery of very small living things in which every picture carries a scale that can be trusted.`,
         image: cover ? renditionUrl(cover, Math.max(...cover.renditionWidths, 0)) : null,
       });
