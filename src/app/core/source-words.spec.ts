@@ -1,4 +1,4 @@
-import { fullSource, shortSource } from './source-words';
+import { fullSource, pageWords, shortSource } from './source-words';
 
 describe('shortSource', () => {
   it('keeps the authors and the year', () => {
@@ -17,5 +17,17 @@ describe('fullSource', () => {
   it('says what is unknown', () => {
     expect(fullSource('Macbride, Slime-Moulds', null)).toBe('Macbride, Slime-Moulds, year unknown');
     expect(fullSource('', null)).toBe('source and year unknown');
+  });
+});
+
+describe('pageWords', () => {
+  it('writes ranges with their dash, and leaves other pages as they are', () => {
+    expect(pageWords('264-265')).toBe('264–265');
+    expect(pageWords('19, 27-28')).toBe('19, 27–28');
+    expect(pageWords('xii')).toBe('xii');
+  });
+
+  it('says that the page is unknown', () => {
+    expect(pageWords('')).toBe('unknown');
   });
 });

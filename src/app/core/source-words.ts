@@ -14,3 +14,8 @@ export function fullSource(source: string, year: number | null): string {
   if (year === null) return $localize`${source}:source:, year unknown`;
   return source.includes(String(year)) ? source : `${source}, ${year}`;
 }
+
+/** Where in the source, with the dash of ranges: "264–265". */
+export function pageWords(page: string): string {
+  return page.replace(/(\d)\s*-\s*(?=\d)/g, '$1–') || $localize`unknown`;
+}

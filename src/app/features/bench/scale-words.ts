@@ -6,6 +6,7 @@ import type { Scale } from '@shared/scale/scale';
 import { expanded, POINTING_PX, rectangular } from '@shared/scale/uncertainty';
 import { formatLength } from '@shared/units/length';
 import { dayWords } from '../../core/day-words';
+import { statedWords } from '../../core/range-words';
 
 /** '0.0732 µm' of '0.0732 µm per pixel ± 0.9 %', and what goes with it. */
 export interface ScaleLine {
@@ -58,7 +59,7 @@ export function groundsLine({ provenance, setAt }: Pick<ScaleView, 'provenance' 
 
 function referenceWords({ objectId, lengthUm }: ScaleProvenance & { by: 'reference' }): string {
   const object = objectId === null ? null : knownObject(objectId);
-  const length = formatLength(lengthUm, lengthUm < 1000 ? 1 : 2);
+  const length = statedWords(lengthUm);
   return object ? `${object.label} (${length})` : $localize`a stated length of ${length}`;
 }
 
@@ -152,7 +153,7 @@ export function evidence(view: ScaleView): readonly EvidenceRow[] {
     case 'reference':
       return [
         { term: $localize`Reference`, said: referenceWords(provenance) },
-        { term: $localize`Its tolerance`, said: `± ${formatLength(provenance.toleranceUm, 2)}` },
+        { term: $localize`Its tolerance`, said: `± ${statedWords(provenance.toleranceUm)}` },
         { term: $localize`Marked over`, said: $localize`${distance(provenance.a, provenance.b).toFixed(0)} px` },
         set,
       ];

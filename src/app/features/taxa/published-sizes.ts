@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import type { PublishedSizeView } from '@shared/contracts/finds';
 import { rangeWords } from '../../core/range-words';
-import { fullSource } from '../../core/source-words';
+import { fullSource, pageWords } from '../../core/source-words';
 import { structureWords } from '../../core/structure-words';
 
 /** What books say, with the book: what is not known of a printed size is said to be unknown. */
@@ -83,7 +83,7 @@ export class PublishedSizes {
       dimension: dimension === 'length' ? $localize`along` : $localize`across`,
       range: rangeWords(minUm, maxUm),
       source: fullSource(source, year),
-      page: page || $localize`unknown`,
+      page: pageWords(page),
       seen,
     })),
   );
