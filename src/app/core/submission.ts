@@ -28,6 +28,11 @@ export class Submission {
     });
   }
 
+  /** What was wrong does not concern what the form says now. */
+  forget(): void {
+    this.met.set(null);
+  }
+
   /** What stands beside the field of this name; null where nothing is wrong. */
   field(name: string): string | null {
     return fieldWords(this.met()?.fields ?? [], `#/${name}`);

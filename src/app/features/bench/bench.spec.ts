@@ -115,6 +115,49 @@ describe('the bench', () => {
     expect(page.querySelector('[aria-label="Undo"]')).toBeNull();
   });
 
+  it('takes the scale of a calibrated setting at one touch, and asks what was done to a smaller picture', async () => {
+    const page = await open(ME, withPicture({}));
+    const press = (words: string) => {
+      const button = [...page.querySelectorAll('button')].find((one) => one.textContent?.includes(words));
+      expect(button?.disabled).toBe(false);
+      button?.click();
+      TestBed.tick();
+    };
+    press('Say what the scale is');
+    http.expectOne('/api/rigs').flush([
+      {
+        id: 'r',
+        name: 'Kitchen microscope',
+        settings: [
+          { id: 's40', name: '40×', calibration: { umPerPxX: 0.25, umPerPxY: 0.25, relativeUncertainty: 0.005 } },
+          { id: 's63', name: '63×', calibration: null },
+        ],
+      },
+    ]);
+    await new Promise((resolve) => setTimeout(resolve));
+    TestBed.tick();
+    expect(document.activeElement?.getAttribute('value')).toBe('setting');
+    expect(page.querySelector('[aria-label="Kitchen microscope"] p')?.textContent).toContain('not calibrated');
+    press('40×');
+    const sent = http.expectOne(`/api/images/${IMAGE}/scales`);
+    expect(sent.request.body).toEqual({ by: 'setting', settingId: 's40' });
+    const sizes = { width: 2000, height: 1500, frameWidth: 4000, frameHeight: 3000 };
+    sent.flush(
+      { type: '/problems/reduced-or-cropped', title: '', status: 409, parameters: sizes },
+      { status: 409, statusText: 'Conflict' },
+    );
+    TestBed.tick();
+    press('It was made smaller');
+    const answered = http.expectOne(`/api/images/${IMAGE}/scales`);
+    expect(answered.request.body).toEqual({ by: 'setting', settingId: 's40', sizeAnswer: 'reduced' });
+    answered.flush(imageView());
+    http.expectOne(`/api/images/${IMAGE}/series`).flush([]);
+    await new Promise((resolve) => setTimeout(resolve));
+    TestBed.tick();
+    expect(page.querySelector('app-set-scale')).toBeNull();
+    expect(document.activeElement?.textContent).toContain('Say what the scale is');
+  });
+
   it('says so when the picture is not here', async () => {
     const page = await open(ME, (http) => {
       http

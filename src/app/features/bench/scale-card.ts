@@ -1,6 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { BenchStore } from './bench-store';
 import { ScaleEvidence } from './scale-evidence';
 import { groundsLine, scaleLine } from './scale-words';
@@ -39,7 +40,7 @@ import { ToolDesk } from './tool-desk';
       @if (setting()) {
         <app-set-scale (done)="close()" />
       } @else {
-        <button type="button" class="link" (click)="set()">{{ view() ? changeWords : setWords }}</button>
+        <button type="button" class="link set" (click)="set()">{{ view() ? changeWords : setWords }}</button>
         @if (isReference()) {
           <a class="link" routerLink="/desk/rigs" [queryParams]="{ image: imageId() }" i18n
             >Calibrate a setting with it…</a
@@ -53,6 +54,8 @@ import { ToolDesk } from './tool-desk';
 export class ScaleCard {
   private readonly bench = inject(BenchStore);
   private readonly desk = inject(ToolDesk);
+  private readonly toPanel = focusOnceShown('app-set-scale input');
+  private readonly toButton = focusOnceShown('.set');
 
   protected readonly changeWords = $localize`Change the scale…`;
   protected readonly setWords = $localize`Say what the scale is…`;
@@ -75,10 +78,12 @@ export class ScaleCard {
   protected set(): void {
     this.asked.set(false);
     this.setting.set(true);
+    this.toPanel();
   }
 
   protected close(): void {
     this.setting.set(false);
     if (this.desk.activity()?.does === 'reference') this.desk.putAway();
+    this.toButton();
   }
 }

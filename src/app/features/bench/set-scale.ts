@@ -24,6 +24,8 @@ import { ToolDesk } from './tool-desk';
 type Way = SetScaleBody['by'];
 /** How far one's own finger was measured, mm: what a ruler gives; the server takes the same. */
 const MEASURED_TO_MM = 0.5;
+/** what a field takes that wants more than zero; smaller than any real pitch, power or reference, in any unit */
+const LEAST = 0.0001;
 
 /**
  * Sets the picture's scale, by whatever is known: a setting, something of known size in the picture, a
@@ -59,11 +61,14 @@ export class SetScale {
     { by: 'optics', words: $localize`the optics' figures` },
     { by: 'nothing', words: $localize`nothing: it is not known` },
   ];
+  protected readonly least = LEAST;
   protected readonly objects = KNOWN_OBJECTS;
   protected readonly units = ['µm', 'mm', 'cm'] as const;
 
   protected readonly by = signal<Way>('setting');
-  protected readonly settingId = signal<string | null>(this.bench.image()?.settingId ?? null);
+  protected readonly settingNow = this.bench.image()?.settingId ?? null;
+  /** the one that was touched: sent at once, and again with the answer to what was done to the picture */
+  private readonly settingId = signal<string | null>(null);
   /** '' for a length that the person states */
   protected readonly objectId = signal('ruler-class-2');
   protected readonly length = signal<number | null>(10);
@@ -100,7 +105,7 @@ export class SetScale {
         return { by: 'nothing' };
     }
   });
-  protected readonly ready = computed(() => this.body() !== null && !this.submission.busy());
+  protected readonly ready = computed(() => this.body() !== null && !this.refused() && !this.submission.busy());
 
   /** What the picture would carry; words where the domain refuses it. */
   protected readonly outcome = computed<{ readonly line: string } | { readonly refusal: string } | null>(() => {
@@ -117,6 +122,10 @@ export class SetScale {
       throw error;
     }
   });
+  private readonly refused = computed(() => {
+    const outcome = this.outcome();
+    return outcome !== null && 'refusal' in outcome;
+  });
   protected readonly question = computed(() => {
     const problem = this.submission.problem();
     return problem?.code === 'reduced-or-cropped' ? problem.parameters : null;
@@ -125,8 +134,14 @@ export class SetScale {
 
   protected choose(by: Way): void {
     this.by.set(by);
+    this.submission.forget();
     if (this.drawing()) this.desk.take({ does: 'reference' });
     else if (this.desk.activity()?.does === 'reference') this.desk.putAway();
+  }
+
+  protected keepSetting(settingId: string): void {
+    this.settingId.set(settingId);
+    this.keep();
   }
 
   protected keep(sizeAnswer?: 'reduced' | 'cropped'): void {
@@ -142,7 +157,7 @@ export class SetScale {
     if (!this.statesLength()) return ends;
     const lengthUm = this.um(this.length());
     const toleranceUm = this.um(this.tolerance());
-    if (!lengthUm || lengthUm <= 0) return null;
+    if (!lengthUm || lengthUm <= 0 || (toleranceUm ?? 0) < 0) return null;
     return { ...ends, lengthUm, ...(toleranceUm === null ? {} : { toleranceUm }) };
   }
 
@@ -154,6 +169,8 @@ export class SetScale {
       this.binning(),
     ];
     if (!pixelPitchUm || !magnification || !relay || !binning) return null;
+    if (Math.min(pixelPitchUm, magnification, relay) < LEAST) return null;
+    if (!Number.isInteger(binning) || binning < 1 || binning > 8) return null;
     return { by: 'optics', pixelPitchUm, magnification, relay, binning };
   }
 

@@ -1,41 +1,41 @@
-import { ChangeDetectionStrategy, Component, computed, inject, model } from '@angular/core';
-import { FormsModule } from '@angular/forms';
-import { MatFormFieldModule } from '@angular/material/form-field';
-import { MatSelectModule } from '@angular/material/select';
+import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { rigRoutes } from '@shared/contracts/rigs';
 import { Api } from '../../core/api';
 import { ProblemBox } from '../../ui/problem/problem';
 import { scaleLine } from './scale-words';
 
-/** A setting of the own rigs, each with the scale that it would give. */
+/** The settings of the own rigs, each with the scale that it would give: one touch chooses. */
 @Component({
   selector: 'app-setting-choice',
-  imports: [FormsModule, MatFormFieldModule, MatSelectModule, RouterLink, ProblemBox],
+  imports: [RouterLink, ProblemBox],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
     @if (rigs.error(); as error) {
       <app-problem [problem]="error" [retry]="true" (again)="rigs.reload()" />
     } @else if (groups().length > 0) {
-      <mat-form-field appearance="outline">
-        <mat-label i18n>Setting</mat-label>
-        <mat-select [ngModel]="settingId()" (ngModelChange)="settingId.set($event)" name="setting">
-          @for (group of groups(); track group.id) {
-            <mat-optgroup [label]="group.name">
-              @for (setting of group.settings; track setting.id) {
-                <mat-option [value]="setting.id" [disabled]="setting.scale === null">
-                  {{ setting.name }}
-                  @if (setting.scale; as scale) {
-                    <span class="soft numbers">, {{ scale }}</span>
-                  } @else {
-                    <span class="soft" i18n>, not calibrated</span>
-                  }
-                </mat-option>
-              }
-            </mat-optgroup>
+      <p class="small" i18n>Choose the setting that it was taken with; its scale is kept at once.</p>
+      @for (group of groups(); track group.id) {
+        <div role="group" [attr.aria-label]="group.name">
+          <h3>{{ group.name }}</h3>
+          @for (setting of group.settings; track setting.id) {
+            @if (setting.scale; as scale) {
+              <button
+                type="button"
+                [disabled]="busy()"
+                [attr.aria-current]="setting.id === current() || null"
+                (click)="chosen.emit(setting.id)"
+              >
+                <span>{{ setting.name }}</span> <span class="soft numbers">{{ scale }}</span>
+              </button>
+            } @else {
+              <p class="without">
+                <span>{{ setting.name }}</span> <span class="soft" i18n>not calibrated</span>
+              </p>
+            }
           }
-        </mat-select>
-      </mat-form-field>
+        </div>
+      }
     } @else if (rigs.isLoading()) {
       <p class="soft" role="status" i18n>Looking for your rigs…</p>
     } @else {
@@ -46,8 +46,43 @@ import { scaleLine } from './scale-words';
     }
   `,
   styles: `
-    mat-form-field {
+    h3 {
+      margin: 0 0 4px;
+      font-family: inherit;
+      font-size: 0.9375rem;
+      font-weight: 600;
+    }
+    [role='group'] {
+      margin-bottom: 12px;
+    }
+    button,
+    .without {
+      display: flex;
+      flex-wrap: wrap;
+      justify-content: space-between;
+      align-items: center;
+      gap: 0 12px;
+      box-sizing: border-box;
       width: 100%;
+      min-height: 44px;
+      margin: 0;
+      padding: 6px 10px;
+      color: inherit;
+      font: inherit;
+      font-size: 0.9375rem;
+      text-align: left;
+      overflow-wrap: anywhere;
+    }
+    button {
+      margin-bottom: 4px;
+      background: none;
+      border: 1px solid var(--line-strong);
+      border-radius: 2px;
+      cursor: pointer;
+    }
+    button:hover,
+    button[aria-current] {
+      border-color: var(--rust);
     }
     p {
       font-size: 0.9375rem;
@@ -55,7 +90,11 @@ import { scaleLine } from './scale-words';
   `,
 })
 export class SettingChoice {
-  readonly settingId = model.required<string | null>();
+  /** the setting that the picture has now */
+  readonly current = input<string | null>(null);
+  /** an earlier choice is on its way */
+  readonly busy = input(false);
+  readonly chosen = output<string>();
 
   protected readonly rigs = inject(Api).resource(rigRoutes.list, () => ({}));
   protected readonly groups = computed(() =>
