@@ -7,6 +7,7 @@ import { MatSelectModule } from '@angular/material/select';
 import { findRoutes, OBSERVATION_KINDS, type FindView } from '@shared/contracts/finds';
 import { Api } from '../../core/api';
 import { today } from '../../core/day-words';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { Submission } from '../../core/submission';
 import { kindWords } from './observation-words';
 
@@ -34,6 +35,10 @@ export class AddObservation {
     substrate: ['', Validators.maxLength(120)],
     remarks: ['', Validators.maxLength(2000)],
   });
+
+  constructor() {
+    focusOnceShown('input, mat-select')();
+  }
 
   protected add(): void {
     this.form.markAllAsTouched();

@@ -6,6 +6,7 @@ import { MatInputModule } from '@angular/material/input';
 import { MatSelectModule } from '@angular/material/select';
 import { findRoutes, type FindView, type ObservationView } from '@shared/contracts/finds';
 import { Api } from '../../core/api';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { Submission } from '../../core/submission';
 import { CONDITIONS, conditionWords } from './observation-words';
 
@@ -42,6 +43,10 @@ export class AddPreparation {
     condition: ['unknown' as (typeof CONDITIONS)[number]],
     imageIds: [[] as string[]],
   });
+
+  constructor() {
+    focusOnceShown('input, mat-select')();
+  }
 
   protected add(): void {
     this.form.markAllAsTouched();

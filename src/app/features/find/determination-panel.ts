@@ -4,6 +4,7 @@ import { RouterLink } from '@angular/router';
 import { findRoutes, type CONFIDENCES, type FindView } from '@shared/contracts/finds';
 import { Api } from '../../core/api';
 import { dayWords } from '../../core/day-words';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { SessionStore } from '../../core/session-store';
 import { Submission } from '../../core/submission';
 import { ProblemBox } from '../../ui/problem/problem';
@@ -28,6 +29,7 @@ export class DeterminationPanel {
 
   protected readonly giving = signal(false);
   protected readonly deciding = new Submission();
+  private readonly toButton = focusOnceShown('.buttons button');
 
   protected readonly determinations = computed(() => {
     const newestFirst = this.find().determinations.toSorted((a, b) => b.determinedAt.localeCompare(a.determinedAt));
@@ -41,12 +43,17 @@ export class DeterminationPanel {
 
   protected letStand(determinationId: string): void {
     const params = { findId: this.find().id, determinationId };
-    this.deciding.send(this.api.call(findRoutes.decide, { params }), (find) => this.changed.emit(find));
+    this.deciding.send(this.api.call(findRoutes.decide, { params }), (find) => this.take(find));
   }
 
   protected take(find: FindView): void {
-    this.giving.set(false);
+    this.close();
     this.changed.emit(find);
+  }
+
+  protected close(): void {
+    this.giving.set(false);
+    this.toButton();
   }
 
   private toldOf(who: string, when: string, confidence: (typeof CONFIDENCES)[number]): string {

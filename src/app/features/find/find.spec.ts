@@ -250,6 +250,8 @@ describe('Find', () => {
     await show(find({ may: { edit: false, determine: true, decide: false } }));
     element().querySelector<HTMLElement>('app-determination-panel .buttons button')?.click();
     await harness.fixture.whenStable();
+    expect(document.activeElement?.closest('app-taxon-picker')).not.toBeNull();
+    http.expectOne('/api/taxa').flush([]);
     expect(text('app-give-name .caution')).toContain('never says that something is safe to eat');
     element().querySelector('app-give-name form')?.dispatchEvent(new Event('submit'));
     await harness.fixture.whenStable();

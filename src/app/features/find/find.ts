@@ -17,6 +17,7 @@ import { findRoutes, type FindView } from '@shared/contracts/finds';
 import type { ImageView } from '@shared/contracts/images';
 import { Api } from '../../core/api';
 import { toApiProblem } from '../../core/api-problem';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { nameWords } from '../../core/name-words';
 import { PageMeta } from '../../core/page-meta';
 import { Empty } from '../../ui/empty/empty';
@@ -64,6 +65,7 @@ export class Find {
   protected readonly find = computed(() => (this.answer.hasValue() ? this.answer.value() : null));
   protected readonly missing = computed(() => toApiProblem(this.answer.error()).code === 'not-found');
   protected readonly adding = signal(false);
+  private readonly toButton = focusOnceShown('.add button');
   protected readonly names = computed(() => {
     const find = this.find();
     return find ? pictureNames(find) : new Map<string, string>();
@@ -92,7 +94,11 @@ export class Find {
   /** Every change answers with the whole find, so that nothing has to be fetched again. */
   protected take(find: FindView): void {
     this.answer.set(find);
+  }
+
+  protected close(): void {
     this.adding.set(false);
+    this.toButton();
   }
 
   /** Describing a picture answers with the picture alone. */

@@ -10,6 +10,7 @@ import { CONFIDENCES, findRoutes, QUALIFIERS, type FindView } from '@shared/cont
 import type { TaxonName } from '@shared/contracts/taxa';
 import { of, switchMap, type Observable } from 'rxjs';
 import { Api } from '../../core/api';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { Submission } from '../../core/submission';
 import { TaxonPicker } from '../../ui/taxon-picker/taxon-picker';
 import { confidenceWords } from './confidence-words';
@@ -59,6 +60,10 @@ export class GiveName {
     reason: ['', [Validators.required, Validators.maxLength(2000), Validators.pattern(/\S/)]],
     stands: [true],
   });
+
+  constructor() {
+    focusOnceShown('input, mat-select')();
+  }
 
   protected pick(taxon: TaxonName | null): void {
     this.taxon.set(taxon);

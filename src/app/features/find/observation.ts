@@ -3,6 +3,7 @@ import { MatButtonModule } from '@angular/material/button';
 import type { FindPicture, FindView, ObservationView } from '@shared/contracts/finds';
 import type { ImageView } from '@shared/contracts/images';
 import { dayWords } from '../../core/day-words';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { Each, Justified, type RowAspects } from '../../ui/justified/justified';
 import { AddPreparation } from './add-preparation';
 import { FindPictureCard } from './find-picture-card';
@@ -28,6 +29,7 @@ export class Observation {
   readonly described = output<ImageView>();
 
   protected readonly adding = signal(false);
+  private readonly toButton = focusOnceShown('.add');
   /** In narrower rooms than the gallery's; a picture that is alone is shown larger. */
   protected rowsFor(pictures: readonly FindPicture[]): RowAspects {
     return pictures.length === 1 ? { s: 1.5, m: 2, l: 2.3, xl: 3 } : { s: 1.5, m: 2.8, l: 3.2, xl: 4.4 };
@@ -54,7 +56,12 @@ export class Observation {
   );
 
   protected take(find: FindView): void {
-    this.adding.set(false);
+    this.close();
     this.changed.emit(find);
+  }
+
+  protected close(): void {
+    this.adding.set(false);
+    this.toButton();
   }
 }

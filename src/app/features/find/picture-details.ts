@@ -91,6 +91,7 @@ export class PictureDetails {
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
     if (this.busy()) return;
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     const call = { params: { imageId: this.picture.id }, body: this.form.getRawValue() };
