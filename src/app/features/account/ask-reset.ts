@@ -35,6 +35,7 @@ export class AskReset {
   protected ask(element: HTMLFormElement): void {
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     const body = this.form.getRawValue();

@@ -54,6 +54,7 @@ export class Invitation {
     if (named) this.form.controls.email.disable(); // then it is not asked
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     const { email, name, password } = this.form.getRawValue();

@@ -38,6 +38,7 @@ export class Reset {
   protected save(element: HTMLFormElement): void {
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(sessionRoutes.reset, { body: { token: this.token(), ...this.form.getRawValue() } }).subscribe({

@@ -50,6 +50,7 @@ export class SignIn {
   }
 
   private send(credentials: Credentials, element?: HTMLFormElement): void {
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.session.signIn(credentials).subscribe({

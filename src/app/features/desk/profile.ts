@@ -62,6 +62,7 @@ export class Profile {
     this.form.markAllAsTouched();
     this.saved.set(false);
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(sessionRoutes.saveProfile, { body: this.form.getRawValue() }).subscribe({

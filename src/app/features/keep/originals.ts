@@ -39,6 +39,7 @@ export class Originals {
   });
 
   protected check(): void {
+    if (this.checking()) return;
     this.checking.set(true);
     this.problem.set(null);
     this.result.set(null);

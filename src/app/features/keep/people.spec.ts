@@ -65,6 +65,18 @@ describe('people on the keeper’s desk', () => {
     expect(page().textContent).toContain('None is open');
   });
 
+  it('sends one invitation, however often the button is pressed', async () => {
+    const email = page().querySelector<HTMLInputElement>('form input')!;
+    email.value = 'mira@x.example';
+    email.dispatchEvent(new Event('input'));
+    const form = page().querySelector('form')!;
+    form.dispatchEvent(new Event('submit'));
+    form.dispatchEvent(new Event('submit'));
+    http.expectOne('/api/keep/invitations').flush({ ...OPEN, id: 'two', email: 'mira@x.example' });
+    await fixture.whenStable();
+    expect(page().textContent).toContain('An invitation to mira@x.example is on its way.');
+  });
+
   it('does not send a form without an address', async () => {
     page().querySelector('form')!.dispatchEvent(new Event('submit'));
     await fixture.whenStable();

@@ -50,6 +50,7 @@ export class People {
     this.invited.set(null);
     if (this.form.invalid) return focusFirstInvalid(element);
     const body = this.form.getRawValue();
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(keepRoutes.invite, { body }).subscribe({

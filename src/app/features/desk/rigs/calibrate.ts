@@ -102,6 +102,7 @@ export class Calibrate {
     const cross = this.across() && this.crossMarks().length >= 2 ? { crossMarks: [...this.crossMarks()] } : {};
     const body = { imageId, marks: [...this.marks()], ...cross, ...this.micrometer() };
     const params = { rigId: this.rigId(), settingId: this.settingId() };
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(rigRoutes.calibrate, { params, body }).subscribe({

@@ -40,7 +40,9 @@ import { scaleWords } from './calibration-words';
             }
           }
         </span>
-        <button type="button" mat-stroked-button [disabled]="busy()" (click)="give()" i18n>Yes, give this scale</button>
+        <button type="button" mat-stroked-button [disabled]="busy()" disabledInteractive (click)="give()" i18n>
+          Yes, give this scale
+        </button>
       </p>
     }
     @if (problem(); as problem) {
@@ -100,6 +102,7 @@ export class CalibrationKept {
   }
 
   protected give(): void {
+    if (this.busy()) return;
     this.busy.set(true);
     this.giver
       .give(this.candidates(), this.kept().calibration.settingId, () => of(undefined))

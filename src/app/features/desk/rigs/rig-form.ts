@@ -34,6 +34,7 @@ export class RigForm {
   protected add(element: HTMLFormElement): void {
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(rigRoutes.add, { body: this.form.getRawValue() }).subscribe({

@@ -56,6 +56,7 @@ export class SettingForm {
   protected add(element: HTMLFormElement): void {
     this.form.markAllAsTouched();
     if (this.form.invalid) return focusFirstInvalid(element);
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     const call = { params: { rigId: this.rig.id }, body: this.form.getRawValue() };

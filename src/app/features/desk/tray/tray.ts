@@ -161,6 +161,7 @@ export class Tray {
   protected giveSetting(settingId: string): void {
     const ask = (count: number) =>
       this.dialog.open<SizeQuestion, number, SizeAnswer>(SizeQuestion, { width: '460px', data: count }).afterClosed();
+    if (this.busy()) return;
     this.busy.set(true);
     this.giver
       .give(this.chosen(), settingId, ask)

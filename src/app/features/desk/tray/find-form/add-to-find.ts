@@ -79,6 +79,7 @@ export class AddToFind {
     if (findId === null) return element.querySelector<HTMLElement>('mat-radio-button input')?.focus();
     if (this.form.invalid) return focusFirstInvalid(element);
     const body = { imageIds: this.pictures.map(({ id }) => id), ...this.form.getRawValue() };
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(findRoutes.addObservation, { params: { findId }, body }).subscribe({

@@ -102,6 +102,7 @@ export class MakeFind {
       ...rest,
       heldUntil: rest.visibility === 'held' ? heldUntil : null,
     };
+    if (this.busy()) return;
     this.busy.set(true);
     this.problem.set(null);
     this.api.call(findRoutes.make, { body }).subscribe({
