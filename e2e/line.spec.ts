@@ -121,7 +121,6 @@ test('from a photograph, a micrograph and a stage micrometer to a named picture 
     await page.getByRole('textbox', { name: 'What is said' }).fill('warts, not a net');
     await page.keyboard.press('Enter');
     await expect(page.getByText('all kept')).toBeVisible();
-    await page.screenshot({ path: '/tmp/s7.png' });
   });
 
   await test.step('reads lengths with uncertainty, and the series', async () => {

@@ -1,4 +1,4 @@
-import { FetchBackend, HttpBackend, HttpResponse, type HttpEvent, type HttpRequest } from '@angular/common/http';
+import { FetchBackend, type HttpBackend, HttpResponse, type HttpEvent, type HttpRequest } from '@angular/common/http';
 import { inject, Injectable } from '@angular/core';
 import { map, type Observable } from 'rxjs';
 
