@@ -147,6 +147,17 @@ describe('the bench', () => {
       { status: 409, statusText: 'Conflict' },
     );
     TestBed.tick();
+    expect(document.activeElement?.textContent).toContain('It was made smaller');
+    press('It was cut out');
+    const refused = {
+      type: '/problems/invalid',
+      title: '',
+      status: 422,
+      errors: [{ pointer: '#/sizeAnswer', code: 'larger-than-frame', detail: '' }],
+    };
+    http.expectOne(`/api/images/${IMAGE}/scales`).flush(refused, { status: 422, statusText: 'x' });
+    TestBed.tick();
+    expect(page.querySelector('app-set-scale')?.textContent).toContain('never larger than the calibrated frame');
     press('It was made smaller');
     const answered = http.expectOne(`/api/images/${IMAGE}/scales`);
     expect(answered.request.body).toEqual({ by: 'setting', settingId: 's40', sizeAnswer: 'reduced' });

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, inject, output, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, effect, inject, output, signal } from '@angular/core';
 import { FormsModule } from '@angular/forms';
 import { MatButtonModule } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
@@ -13,6 +13,7 @@ import type { Scale } from '@shared/scale/scale';
 import { DomainError } from '@shared/errors';
 import { MICROMETRES_PER } from '@shared/units/length';
 import { ApiProblem } from '../../core/api-problem';
+import { focusOnceShown } from '../../core/focus-once-shown';
 import { problemWords } from '../../core/problem-words';
 import { SessionStore } from '../../core/session-store';
 import { Submission } from '../../core/submission';
@@ -126,14 +127,26 @@ export class SetScale {
     const outcome = this.outcome();
     return outcome !== null && 'refusal' in outcome;
   });
-  protected readonly question = computed(() => {
-    const problem = this.submission.problem();
-    return problem?.code === 'reduced-or-cropped' ? problem.parameters : null;
+  /** the sizes of the picture and of the calibrated frame, until it is said what was done to the picture */
+  protected readonly question = signal<Readonly<Record<string, string | number>> | null>(null);
+  protected readonly problem = computed(() => {
+    if (this.submission.problem()?.code === 'reduced-or-cropped') return null;
+    return this.submission.field('sizeAnswer') ?? this.submission.words([]);
   });
-  protected readonly problem = computed(() => (this.question() ? null : this.submission.words([])));
+  private readonly toQuestion = focusOnceShown('.question button');
+
+  constructor() {
+    effect(() => {
+      const problem = this.submission.problem();
+      if (problem?.code !== 'reduced-or-cropped') return;
+      this.question.set(problem.parameters);
+      this.toQuestion();
+    });
+  }
 
   protected choose(by: Way): void {
     this.by.set(by);
+    this.question.set(null);
     this.submission.forget();
     if (this.drawing()) this.desk.take({ does: 'reference' });
     else if (this.desk.activity()?.does === 'reference') this.desk.putAway();
@@ -141,6 +154,7 @@ export class SetScale {
 
   protected keepSetting(settingId: string): void {
     this.settingId.set(settingId);
+    this.question.set(null);
     this.keep();
   }
 

@@ -22,7 +22,6 @@ import { scaleLine } from './scale-words';
             @if (setting.scale; as scale) {
               <button
                 type="button"
-                [disabled]="busy()"
                 [attr.aria-current]="setting.id === current() || null"
                 (click)="chosen.emit(setting.id)"
               >
@@ -92,8 +91,6 @@ import { scaleLine } from './scale-words';
 export class SettingChoice {
   /** the setting that the picture has now */
   readonly current = input<string | null>(null);
-  /** an earlier choice is on its way */
-  readonly busy = input(false);
   readonly chosen = output<string>();
 
   protected readonly rigs = inject(Api).resource(rigRoutes.list, () => ({}));
