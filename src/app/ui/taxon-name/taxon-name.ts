@@ -20,7 +20,7 @@ import { nameParts } from '@shared/taxonomy/name';
       font-family: var(--serif);
     }
     span {
-      white-space: pre-wrap; /* the pieces carry their spaces */
+      white-space-collapse: preserve; /* the pieces carry their spaces; whether lines break is for the place to say */
     }
   `,
 })

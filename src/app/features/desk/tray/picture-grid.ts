@@ -86,9 +86,15 @@ export class PictureGrid {
 
   /** To where one was, or to the first: after a form has closed and its pictures are gone. */
   focus(): void {
-    const id = this.focused();
-    if (id !== null) this.focusCell(id);
-    else this.grid().nativeElement.focus();
+    // Only then are they gone: which cell is the first is not known before.
+    afterNextRender(
+      () => {
+        const id = this.focused();
+        if (id !== null) this.focusCell(id);
+        else this.grid().nativeElement.focus();
+      },
+      { injector: this.injector },
+    );
   }
 
   protected touch(event: Event, id: string): void {
