@@ -63,7 +63,7 @@ describe('intake', () => {
           FocalPlaneYResolution: '2500000/1000',
           FocalPlaneResolutionUnit: '3',
         },
-        // CHECKS of coordinates: 51° 30′ 26.45″ N, 0° 7′ 39.99″ W
+        // 51° 30′ 26.45″ N, 0° 7′ 39.99″ W: degrees + minutes/60 + seconds/3600
         IFD3: {
           GPSLatitudeRef: 'N',
           GPSLatitude: '51/1 30/1 2645/100',
