@@ -51,7 +51,6 @@ export class MeasurementService {
     const way = structureOf(measurement.structure)?.way;
     if (!way) throw new Error(`A series measures ${measurement.structure}, which is no structure.`);
     for (const dimension of measureNote(measurement.geometry, way, version.scale).dimensions) {
-      if (dimension.px === 0) continue; // both ends on one spot: not drawn yet, and no body has a size of nothing
       await this.measurements.insertValue(
         {
           ...dimension,

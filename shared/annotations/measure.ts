@@ -26,6 +26,12 @@ export interface BodyMeasure {
 }
 
 /**
+ * A shorter line says nothing, image px: both of its ends lie within the pointing of one. It counts as not
+ * drawn, since no body has a size of nothing.
+ */
+const SHORTEST_LINE_PX = POINTING_PX;
+
+/**
  * One body's dimensions, from what was drawn on it and the picture's scale.
  *
  * A cross is not reordered: what was drawn along is the length, also when it comes out shorter.
@@ -44,11 +50,13 @@ export function measureNote(
   pointingPx: number = POINTING_PX,
 ): BodyMeasure {
   const perPixel = scale ? { x: scale.umPerPxX, y: scale.umPerPxY } : { x: 1, y: 1 };
-  const drawn = drawnDimensions(geometry, way).map(({ dimension, points }) => {
-    const size = pathLength(points, perPixel);
-    const pointing = pointingPx * pathPointing(points, perPixel);
-    return { dimension, px: pathLength(points), size, pointing };
-  });
+  const drawn = drawnDimensions(geometry, way)
+    .map(({ dimension, points }) => {
+      const size = pathLength(points, perPixel);
+      const pointing = pointingPx * pathPointing(points, perPixel);
+      return { dimension, px: pathLength(points), size, pointing };
+    })
+    .filter(({ px }) => px >= SHORTEST_LINE_PX);
   const length = drawn.find(({ dimension }) => dimension === 'length');
   const width = drawn.find(({ dimension }) => dimension === 'width');
   const q = length && width && width.size > 0 ? length.size / width.size : null;

@@ -86,6 +86,13 @@ describe('measuring a body', () => {
     expect(measureNote(flat, 'along-then-across', SCALE)).toMatchObject({ q: null, qU: null });
   });
 
+  it('takes an end dragged onto the other for a line that is not drawn', () => {
+    const line = (b: number) => measureNote({ type: 'line', a: px(10, 20), b: px(b, 20) }, 'along', null).dimensions;
+    expect(line(10)).toEqual([]);
+    expect(line(10 + 1e-14)).toEqual([]);
+    expect(line(10.5)).toHaveLength(1);
+  });
+
   it('refuses shapes that measure nothing', () => {
     const pointer: NoteGeometry = { type: 'pointer', at: px(1, 1), label: px(9, 9) };
     expect(codeOf(() => measureNote(pointer, 'along', SCALE))).toBe('wrong-shape');

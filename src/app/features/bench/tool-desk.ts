@@ -58,7 +58,9 @@ export class ToolDesk {
   /** something is begun that Escape would drop */
   readonly busy = computed(() => this.preview().lines.length > 0 || this.awaits() === 'across');
 
+  /** Another tool lets go of the selected note, whose ends would otherwise catch the first stroke beside them. */
   take(activity: Activity): void {
+    if (JSON.stringify(activity) !== JSON.stringify(this.inHand())) this.notes.select(null);
     this.inHand.set(activity);
     this.running.set(start(activity));
     if (activity.does === 'measure') this.bench.structure.set(activity.structure);
