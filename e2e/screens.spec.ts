@@ -7,6 +7,8 @@ import { screensOf, signInAs } from './support/screens.js';
  * over (WCAG 2.2 AA as far as axe can tell), nothing wider than the screen, no error in the console, and no
  * request that leaves the machine.
  */
+test.describe.configure({ mode: 'parallel' });
+
 for (const colorScheme of ['light', 'dark'] as const) {
   for (const width of [1280, 390]) {
     test(`every screen is accessible and sound, ${colorScheme}, ${width} px`, async ({ browser, baseURL }) => {
