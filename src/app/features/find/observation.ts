@@ -9,6 +9,16 @@ import { AddPreparation } from './add-preparation';
 import { FindPictureCard } from './find-picture-card';
 import { conditionWords, kindWords } from './observation-words';
 
+interface PictureGroup {
+  readonly id: string;
+  /** '' for pictures that need none */
+  readonly title: string;
+  readonly about: string;
+  readonly pictures: readonly FindPicture[];
+}
+
+const hasPictures = ({ pictures }: PictureGroup): boolean => pictures.length > 0;
+
 /** One dated look at the find: its date and kind stand as its title, its pictures by preparation. */
 @Component({
   selector: 'app-observation',
@@ -42,18 +52,27 @@ export class Observation {
     const { observer } = this.observation();
     return observer.id === this.finderId() ? null : observer.name;
   });
-  private readonly subjects = computed(() => this.observation().pictures.filter((p) => p.role === 'subject'));
-  protected readonly loose = computed(() => this.subjects().filter((p) => p.preparationId === null));
-  protected readonly references = computed(() => this.observation().pictures.filter((p) => p.role === 'reference'));
-  protected readonly preparations = computed(() =>
-    this.observation().preparations.map((preparation) => ({
-      ...preparation,
-      about: [preparation.part, preparation.medium, preparation.stain, conditionWords(preparation.condition)]
-        .filter(Boolean)
-        .join(', '),
-      pictures: this.subjects().filter((picture) => picture.preparationId === preparation.id),
-    })),
-  );
+  /** Its pictures: those of no preparation, those of each, and last what their scale comes from. */
+  protected readonly groups = computed<readonly PictureGroup[]>(() => {
+    const { pictures, preparations } = this.observation();
+    const subjects = pictures.filter(({ role }) => role === 'subject');
+    const of = (id: string | null) => subjects.filter(({ preparationId }) => preparationId === id);
+    const loose: PictureGroup = { id: 'loose', title: '', about: '', pictures: of(null) };
+    const references: PictureGroup = {
+      id: 'references',
+      title: $localize`Scale references`,
+      about: $localize`Not pictures of the find: the scale of others comes from them.`,
+      pictures: pictures.filter(({ role }) => role === 'reference'),
+    };
+    return [
+      ...[loose].filter(hasPictures),
+      ...preparations.map(({ id, title, part, medium, stain, condition }) => ({
+        ...{ id, title, pictures: of(id) },
+        about: [part, medium, stain, conditionWords(condition)].filter(Boolean).join(', '),
+      })),
+      ...[references].filter(hasPictures),
+    ];
+  });
 
   protected take(find: FindView): void {
     this.close();
